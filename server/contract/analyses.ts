@@ -1,0 +1,135 @@
+import { z } from 'zod'
+
+import { DesignDocument, OperatingPointRequest } from '@/converters/document'
+import { CurvePair, ResponseCurve, Roots } from '@/server/contract/curves'
+import { checkFrequenciesAgainstSwitching, Frequencies } from '@/server/contract/frequencies'
+import { Margins } from '@/server/contract/margins'
+
+export const AnalysisRequest = z
+  .object({
+    design: DesignDocument,
+    operatingPoint: OperatingPointRequest.optional(),
+    frequencies: Frequencies.optional(),
+  })
+  .check(checkFrequenciesAgainstSwitching)
+export type AnalysisRequest = z.infer<typeof AnalysisRequest>
+export type AnalysisRequestInput = z.input<typeof AnalysisRequest>
+
+export const Conduction = z.enum(['continuous', 'discontinuous'])
+
+const CurrentFigures = z.object({
+  average: z.number().describe('A'),
+  rms: z.number().describe('A'),
+  peak: z.number().describe('A'),
+})
+
+const OperatingPoint = z.object({
+  lineVoltage: z.number().describe('V'),
+  outputCurrent: z.number().describe('A'),
+  dutyCycle: z.number(),
+  conduction: Conduction,
+  rectifierDuty: z.number().describe('Share of the period in which the rectifier conducts.'),
+  outputRipple: z.number().describe('V peak to peak'),
+  inductorCurrent: CurrentFigures.extend({
+    valley: z.number().describe('A'),
+    ripple: z.number().describe('A peak to peak'),
+  }),
+  switchCurrent: CurrentFigures,
+  rectifierCurrent: CurrentFigures,
+  outputCapacitorRmsCurrent: z.array(z.number()).readonly().describe('A, one for each bank'),
+  switchVoltage: z.number().describe('V, the highest while open'),
+  rectifierVoltage: z.number().describe('V, the highest reverse voltage'),
+  boundaryCurrent: z.number().nullable().describe('A of load at which conduction becomes discontinuous'),
+  controlVoltage: z.number().describe('V at the comparator when the switch turns off'),
+  inputPower: z.number().describe('W'),
+  efficiency: z.number().describe('0 to 1, conduction losses only'),
+})
+
+const ClosedForm = z.object({
+  key: z.enum([
+    'resonance',
+    'quality',
+    'esr-zero',
+    'right-half-plane-zero',
+    'control-gain',
+    'line-gain',
+    'load-pole',
+    'sampling-quality',
+    'critical-slope',
+    'high-frequency-pole',
+  ]),
+  label: z.string(),
+  value: z.number(),
+  unit: z.enum(['Hz', '', 'V', 'V/V', 'V/s']),
+  equation: z.string(),
+  source: z.string(),
+})
+
+const PeriodMap = z.object({
+  multipliers: z.array(z.object({ real: z.number(), imaginary: z.number(), modulus: z.number() })).readonly(),
+  isStable: z.boolean(),
+  slopeNeeded: z.number().nullable().describe('V/s of slope compensation from which the orbit is stable'),
+})
+
+const Loop = z.object({
+  response: CurvePair,
+  compensator: ResponseCurve,
+  compensatorPoles: Roots,
+  compensatorZeros: Roots,
+  closedLoopPoles: Roots,
+  closedLoop: z.object({ lineToOutput: CurvePair, outputImpedance: CurvePair }),
+})
+
+const Mode = z.object({
+  timeConstant: z.number().describe('s'),
+  ringingFrequency: z.number().describe('Hz'),
+  amplitude: z.number().describe('V'),
+})
+
+const StepResponse = z.object({
+  size: z.number().describe('A for the load step, V for the line step'),
+  time: z.array(z.number()).readonly().describe('s'),
+  outputDeviation: z.array(z.number()).readonly().describe('V'),
+  peakDeviation: z.number().describe('V, signed'),
+  peakTime: z.number().describe('s'),
+  recoveryTime: z.number().nullable().describe('s until within a tenth of the peak for good'),
+  modes: z.array(Mode).readonly(),
+})
+
+const Warning = z.object({
+  code: z.enum([
+    'subharmonic-oscillation',
+    'unstable-orbit',
+    'unstable-loop',
+    'models-part',
+    'duty-near-limit',
+    'crossover-above-right-half-plane-zero',
+    'crossover-near-switching',
+    'conditionally-stable',
+    'several-crossovers',
+    'ripple-large',
+    'hazardous-voltage',
+  ]),
+  message: z.string(),
+  field: z.string().nullable(),
+})
+
+/** One design at one operating point: its plant, its loop and its margins. */
+export const Analysis = z.object({
+  engineVersion: z.string(),
+  operatingPoint: OperatingPoint,
+  periodMap: PeriodMap,
+  plant: z.object({ poles: Roots, zeros: Roots, closedForms: z.array(ClosedForm).readonly() }),
+  frequencies: z.array(z.number()).readonly().describe('Hz'),
+  responses: z.object({ controlToOutput: CurvePair, lineToOutput: CurvePair, outputImpedance: CurvePair }),
+  innerCurrentLoop: ResponseCurve.nullable().describe('Current mode only.'),
+  loop: Loop.nullable().describe('Null while the design has no compensator.'),
+  margins: Margins.nullable().describe('From the switched model.'),
+  averagedMargins: Margins.nullable(),
+  steps: z
+    .object({ load: StepResponse, line: StepResponse })
+    .nullable()
+    .describe('Null without a compensator or when the loop is unstable.'),
+  warnings: z.array(Warning).readonly(),
+})
+export type Analysis = z.infer<typeof Analysis>

@@ -1,0 +1,91 @@
+/** Every endpoint of the API, as the OpenAPI document and the tests read it. */
+import type { z } from 'zod'
+
+import { Analysis, AnalysisRequest } from '@/server/contract/analyses'
+import { CompensatorProposals, CompensatorsRequest } from '@/server/contract/compensators'
+import { CornerSet, CornersRequest } from '@/server/contract/corners'
+import type { ProblemCode } from '@/server/contract/problems'
+import { Sample, SampleList, SampleSlug } from '@/server/contract/samples'
+import { StageProposal, StageProposalRequest } from '@/server/contract/stageProposals'
+
+export const API_ROOT = '/api/v1'
+
+export interface Endpoint {
+  readonly operation: string
+  readonly method: 'get' | 'post'
+  /** Below the root; parameters in braces. */
+  readonly path: string
+  readonly summary: string
+  readonly parameters?: Readonly<Record<string, z.ZodType>>
+  readonly request?: { readonly name: string; readonly schema: z.ZodType }
+  readonly response: { readonly name: string; readonly schema: z.ZodType; readonly description: string }
+  readonly problems: readonly ProblemCode[]
+}
+
+const COMPUTE_PROBLEMS: readonly ProblemCode[] = [
+  'malformed-json',
+  'invalid-request',
+  'request-too-large',
+  'unsupported-media-type',
+  'design-refused',
+  'too-many-requests',
+  'unexpected',
+  'busy',
+  'computation-stopped',
+]
+
+export const ENDPOINTS: readonly Endpoint[] = [
+  {
+    operation: 'analyseDesign',
+    method: 'post',
+    path: '/analyses',
+    summary: 'Computes one design at one operating point: plant, responses of both models, loop, margins and steps.',
+    request: { name: 'AnalysisRequest', schema: AnalysisRequest },
+    response: { name: 'Analysis', schema: Analysis, description: 'The analysis.' },
+    problems: COMPUTE_PROBLEMS,
+  },
+  {
+    operation: 'analyseCorners',
+    method: 'post',
+    path: '/corners',
+    summary: 'Computes the loop at every corner of line and load.',
+    request: { name: 'CornersRequest', schema: CornersRequest },
+    response: { name: 'CornerSet', schema: CornerSet, description: 'The corners.' },
+    problems: COMPUTE_PROBLEMS,
+  },
+  {
+    operation: 'proposeCompensators',
+    method: 'post',
+    path: '/compensators',
+    summary: 'Proposes error-amplifier networks in values that can be bought, or says why none can work.',
+    request: { name: 'CompensatorsRequest', schema: CompensatorsRequest },
+    response: { name: 'CompensatorProposals', schema: CompensatorProposals, description: 'The proposals, best first.' },
+    problems: COMPUTE_PROBLEMS,
+  },
+  {
+    operation: 'proposeStage',
+    method: 'post',
+    path: '/stage-proposals',
+    summary: 'Proposes a whole power stage from line, output and frequency, with the reason for every choice.',
+    request: { name: 'StageProposalRequest', schema: StageProposalRequest },
+    response: { name: 'StageProposal', schema: StageProposal, description: 'The design and its reasons.' },
+    problems: COMPUTE_PROBLEMS,
+  },
+  {
+    operation: 'listSamples',
+    method: 'get',
+    path: '/samples',
+    summary: 'Lists the worked samples.',
+    response: { name: 'SampleList', schema: SampleList, description: 'The samples in their order.' },
+    problems: ['too-many-requests', 'unexpected'],
+  },
+  {
+    operation: 'getSample',
+    method: 'get',
+    path: '/samples/{slug}',
+    summary: 'Gives one worked sample with its design.',
+    parameters: { slug: SampleSlug },
+    response: { name: 'Sample', schema: Sample, description: 'The sample.' },
+    problems: ['not-found', 'too-many-requests', 'unexpected'],
+  },
+]
