@@ -230,7 +230,8 @@ export function formatQuantity(value: number, unit: Unit, digits = 3): string {
   const exponent = Number(exponentText)
   const thousands = 3 * Math.floor(exponent / 3)
   const prefix = PREFIX_BY_EXPONENT.get(thousands)
-  if (prefix === undefined) return withMinus(`${mantissa}e${exponent} ${unit}`)
+  // A prefix that nobody means for this unit would be asked about when typed back.
+  if (prefix === undefined || prefix === FORMS[unit].implausible) return withMinus(`${mantissa}e${exponent} ${unit}`)
   const shift = exponent - thousands
   return withMinus(`${Number(`${mantissa}e${shift}`).toFixed(Math.max(0, digits - 1 - shift))} ${prefix}${unit}`)
 }

@@ -1,0 +1,127 @@
+/**
+ * The power stage of a design at one line voltage and load current, as one linear circuit an interval: the switch on,
+ * the rectifier conducting, and (where conduction can stop) neither.
+ */
+import type { DesignDocument } from './document'
+import { GROUND, reduceNetwork, type Element, type Measure } from './network'
+import { topologyOf } from './topologies'
+import type { TopologyDefinition } from './topologies/topology'
+
+/** Rows of the measures that every interval carries; the currents of the output banks follow. */
+export const MEASURES = {
+  outputVoltage: 0,
+  switchCurrent: 1,
+  rectifierCurrent: 2,
+  lineCurrent: 3, // drawn from the line source
+  inductorCurrent: 4,
+  switchVoltage: 5,
+  rectifierVoltage: 6,
+  firstBank: 7,
+} as const
+
+export interface Interval {
+  readonly A: number[][]
+  readonly B: number[][]
+  /** Row m of C and D reads measure m of `MEASURES`. */
+  readonly C: number[][]
+  readonly D: number[][]
+}
+
+export interface Circuit {
+  readonly design: DesignDocument
+  readonly topology: TopologyDefinition
+  readonly lineVoltage: number // V
+  readonly outputCurrent: number // A
+  readonly period: number // s
+  readonly states: readonly string[]
+  /** Index of the state that stops when conduction stops. */
+  readonly stoppingState: number
+  /** Constant inputs: line voltage, load source current, rectifier drop. */
+  readonly inputs: readonly [number, number, number]
+  readonly on: Interval
+  readonly off: Interval
+  readonly idle: Interval
+  /** Pieces of the output capacitance as states see them; `banks` lists which banks of the document each one holds. */
+  readonly outputStates: readonly { readonly capacitance: number; readonly esr: number; readonly banks: readonly number[] }[]
+}
+
+/** @throws DesignError 'singular-network' or 'not-yet-supported'. */
+export function buildCircuit(design: DesignDocument, lineVoltage: number, outputCurrent: number): Circuit {
+  const topology = topologyOf(design.topology)
+  const outputStates = mergeBanks(design)
+  const { positive, negative } = topology.output
+  const load = linearLoad(design, outputCurrent)
+  const common: Element[] = [
+    { kind: 'branch', name: 'source', from: 'line', to: GROUND, resistance: 0, source: 'line' },
+    ...topology.always(design),
+    ...outputStates.map(({ capacitance, esr }, i): Element => {
+      return { kind: 'capacitor', name: `output${i}`, from: positive, to: negative, capacitance, esr }
+    }),
+    { kind: 'conductance', from: positive, to: negative, conductance: load.conductance },
+    { kind: 'current-source', from: positive, to: negative, source: 'load' },
+  ]
+  const states = [...topology.inductors, ...topology.capacitors, ...outputStates.map((_, i) => `output${i}`)]
+  const measures: Measure[] = [
+    { kind: 'voltage', from: positive, to: negative },
+    { kind: 'current', of: 'switch' },
+    { kind: 'current', of: 'rectifier' },
+    { kind: 'current', of: 'source' },
+    { kind: 'current', of: topology.inductors[0]! },
+    topology.stress.switch,
+    topology.stress.rectifier,
+    ...outputStates.map((_, i): Measure => ({ kind: 'current', of: `output${i}` })),
+  ]
+  const reduce = (elements: readonly Element[]): Interval => {
+    const reduced = reduceNetwork(elements, states, measures)
+    // The source's branch current flows into its positive end; what the line delivers is its negative.
+    reduced.C[MEASURES.lineCurrent] = reduced.C[MEASURES.lineCurrent]!.map((value) => -value)
+    reduced.D[MEASURES.lineCurrent] = reduced.D[MEASURES.lineCurrent]!.map((value) => -value)
+    return reduced
+  }
+  return {
+    design,
+    topology,
+    lineVoltage,
+    outputCurrent,
+    period: 1 / design.switchingFrequency,
+    states,
+    stoppingState: 0,
+    inputs: [lineVoltage, load.current, design.rectifier.forwardVoltage],
+    on: reduce([...common, ...topology.on(design)]),
+    off: reduce([...common, ...topology.off(design)]),
+    // With no current there is no voltage across the inductor, so it reads as a plain connection and its state stands.
+    idle: reduce(common.map((element) => (element.kind === 'inductor' ? connection(element) : element))),
+    outputStates,
+  }
+}
+
+function connection({ name, from, to }: { name: string; from: string; to: string }): Element {
+  return { kind: 'branch', name: `${name}, at rest`, from, to, resistance: 0 }
+}
+
+/** Banks without ESR sit on the same voltage, so together they are one state; every other bank is its own. */
+function mergeBanks(design: DesignDocument): Circuit['outputStates'] {
+  const pieces = design.outputCapacitors.map(({ count, capacitance, esr }, bank) => ({
+    capacitance: count * capacitance,
+    esr: esr / count,
+    banks: [bank],
+  }))
+  const ideal = pieces.filter((piece) => piece.esr === 0)
+  const real = pieces.filter((piece) => piece.esr > 0)
+  if (ideal.length === 0) return real
+  const capacitance = ideal.reduce((sum, piece) => sum + piece.capacitance, 0)
+  return [{ capacitance, esr: 0, banks: ideal.flatMap((piece) => piece.banks) }, ...real]
+}
+
+/** The load as a conductance in parallel with a current source, linear about the mean output voltage. */
+function linearLoad({ load, output }: DesignDocument, current: number): { conductance: number; current: number } {
+  switch (load) {
+    case 'resistive':
+      return { conductance: current / output.voltage, current: 0 }
+    case 'constant-current':
+      return { conductance: 0, current }
+    case 'constant-power':
+      // i = P/v ≈ 2P/V − v·P/V²
+      return { conductance: -current / output.voltage, current: 2 * current }
+  }
+}

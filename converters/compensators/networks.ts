@@ -1,0 +1,105 @@
+/**
+ * The error amplifier with its network: complex gain, state equations, poles and zeros.
+ *
+ * Sign: the inversion of the error amplifier is left out, so that the loop gain is T(jω) = G(jω)·(control to output).
+ */
+import type { CompensatorPart, CompensatorType, DesignDocument } from '../document'
+import { DesignError } from '../errors'
+import type { Complex } from '../numeric/complex'
+import { eigenvalues, invariantZeros } from '../numeric/eigen'
+import { opAmpGain, opAmpStateSpace, type OpAmpNetwork } from './opAmp'
+import type { StateSpace } from './stateSpace'
+import { transconductanceGain, transconductanceStateSpace, type TransconductanceNetwork } from './transconductance'
+
+export type Network = OpAmpNetwork | TransconductanceNetwork
+
+/** Which parts each type cannot do without. C2 may be left out of types II and III: its pole is then not fitted. */
+const NEEDED: Readonly<Record<CompensatorType, readonly CompensatorPart[]>> = {
+  I: ['C1'],
+  II: ['R2', 'C1'],
+  III: ['R2', 'C1', 'R3', 'C3'],
+}
+
+export type CompensatorChoice = NonNullable<DesignDocument['compensator']>
+/** What of a design decides the amplifier and its divider. */
+export type AmplifierSetting = Pick<DesignDocument, 'amplifier' | 'sense' | 'output'>
+
+/**
+ * The network that a design's amplifier, divider and compensator parts make.
+ * @throws DesignError 'invalid-compensator' at the missing part, 'invalid-document' for a reference above the output,
+ * 'not-yet-supported' for an amplifier that cannot be computed.
+ */
+export function buildNetwork(setting: AmplifierSetting, compensator: CompensatorChoice): Network {
+  const { type, parts } = compensator
+  for (const part of NEEDED[type]) {
+    if (!parts[part]) {
+      const field = `compensator.parts.${part}`
+      throw DesignError.at('invalid-compensator', field, `A type ${type} network needs ${part}; give it a value.`)
+    }
+  }
+  const { amplifier } = setting
+  const upper = parts.R1 || setting.sense.upperResistance
+  const shared = {
+    type,
+    upperConductance: 1 / upper,
+    lowerConductance: 1 / (upper * lowerRatio(setting)),
+    R2: type === 'I' ? 0 : parts.R2!,
+    C1: parts.C1!,
+    C2: type === 'I' ? 0 : (parts.C2 ?? 0),
+    R3: type === 'III' ? parts.R3! : 0,
+    C3: type === 'III' ? parts.C3! : 0,
+  }
+  switch (amplifier.kind) {
+    case 'op-amp': {
+      const { openLoopGain, gainBandwidth } = amplifier
+      return { ...shared, kind: 'op-amp', openLoopGain, amplifierPole: (2 * Math.PI * gainBandwidth) / openLoopGain }
+    }
+    case 'transconductance': {
+      const { transconductance, outputResistance } = amplifier
+      return { ...shared, kind: 'transconductance', transconductance, outputConductance: 1 / outputResistance }
+    }
+    case 'shunt-optocoupler':
+      throw DesignError.at(
+        'not-yet-supported',
+        'amplifier.kind',
+        'A shunt reference with an optocoupler cannot be computed yet; choose an op-amp or a transconductance amplifier.',
+      )
+  }
+}
+
+/** Lower over upper divider resistance, Vref/(V − Vref); infinite where the output itself is compared. */
+export function lowerRatio({ sense, output }: AmplifierSetting): number {
+  const { referenceVoltage } = sense
+  if (referenceVoltage > output.voltage) {
+    throw DesignError.at(
+      'invalid-document',
+      'sense.referenceVoltage',
+      `A divider can only lower the output: the reference of ${referenceVoltage} V is above the output of ${output.voltage} V.`,
+    )
+  }
+  return referenceVoltage / (output.voltage - referenceVoltage)
+}
+
+/** Complex gain from output voltage to control voltage at `omega` (rad/s, above zero), inversion removed. */
+export function networkGain(network: Network, omega: number): Complex {
+  return network.kind === 'op-amp' ? opAmpGain(network, omega) : transconductanceGain(network, omega)
+}
+
+/** The same as state equations: the states are the network's capacitor voltages and, for an op-amp, its output. */
+export function networkStateSpace(network: Network): StateSpace {
+  return network.kind === 'op-amp' ? opAmpStateSpace(network) : transconductanceStateSpace(network)
+}
+
+/** Poles and zeros in rad/s, the amplifier's own included. */
+export function networkRoots(network: Network): { readonly poles: Complex[]; readonly zeros: Complex[] } {
+  const { A, B, C, D } = networkStateSpace(network)
+  return {
+    poles: eigenvalues(A),
+    zeros: invariantZeros(
+      A,
+      B.map((row) => row[0]!),
+      C[0]!,
+      D[0]![0]!,
+    ),
+  }
+}

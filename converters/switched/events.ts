@@ -1,0 +1,72 @@
+/**
+ * What happens at the switching instants when the orbit is disturbed. A segment ends when a surface h(x, u, v, t) = 0
+ * is reached; a disturbance moves that instant by
+ *   δt = −(h_x·x̂ + h_u·û − v̂)/ḣ
+ * and leaves the state displaced by (f_before − f_after)·δt.
+ * Source: Verghese, Elbuluk and Kassakian, "A general approach to sampled-data modeling for power electronic
+ * circuits", IEEE Trans. Power Electronics 1986.
+ */
+import { MEASURES, type Circuit, type Interval } from '../circuit'
+import { derivative, dot, read } from './flow'
+import type { Orbit } from './orbit'
+
+export interface SwitchingEvent {
+  /** Gradients of the surface over states and inputs; the control voltage enters with weight −`control`. */
+  readonly stateGradient: Float64Array
+  readonly inputGradient: Float64Array
+  /** 1 for the comparator's event, 0 for the rectifier's. */
+  readonly control: 0 | 1
+  /** ḣ along the flow before the event, per second. */
+  readonly rate: number
+  /** f_before − f_after, the state's displacement per second of delay. */
+  readonly displacement: Float64Array
+  /** v_out before − v_out after, V. */
+  readonly outputStep: number
+}
+
+/** The events at the ends of all segments but the last, whose end is the clock's. */
+export function eventsOf(circuit: Circuit, orbit: Orbit): SwitchingEvent[] {
+  const { inputs } = circuit
+  return orbit.segments.slice(0, -1).map((before, k) => {
+    const after = orbit.segments[k + 1]!
+    const fBefore = derivative(before.interval, before.end, inputs)
+    const fAfter = derivative(after.interval, after.start, inputs)
+    const surface = k === 0 ? comparatorSurface(circuit) : rectifierSurface(circuit.off)
+    return {
+      stateGradient: surface.stateGradient,
+      inputGradient: surface.inputGradient,
+      control: k === 0 ? 1 : 0,
+      rate: surface.ownRate + dot(surface.stateGradient, fBefore),
+      displacement: fBefore.map((value, i) => value - fAfter[i]!),
+      outputStep:
+        read(before.interval, MEASURES.outputVoltage, before.end, inputs) -
+        read(after.interval, MEASURES.outputVoltage, after.start, inputs),
+    }
+  })
+}
+
+/** Ramp against control voltage, or sensed switch current plus slope compensation against it. */
+function comparatorSurface({ design: { modulator }, on, period }: Circuit) {
+  if (modulator.kind === 'voltage-mode') {
+    return {
+      stateGradient: new Float64Array(on.A.length),
+      inputGradient: new Float64Array(on.B[0]!.length),
+      ownRate: modulator.rampAmplitude / period,
+    }
+  }
+  const sensed = (row: readonly number[]) => Float64Array.from(row, (value) => value * modulator.currentSenseResistance)
+  return {
+    stateGradient: sensed(on.C[MEASURES.switchCurrent]!),
+    inputGradient: sensed(on.D[MEASURES.switchCurrent]!),
+    ownRate: modulator.slopeCompensation,
+  }
+}
+
+/** The rectifier's current reaching zero. */
+function rectifierSurface(off: Interval) {
+  return {
+    stateGradient: Float64Array.from(off.C[MEASURES.rectifierCurrent]!),
+    inputGradient: Float64Array.from(off.D[MEASURES.rectifierCurrent]!),
+    ownRate: 0,
+  }
+}
