@@ -42,7 +42,11 @@ export interface Circuit {
   readonly off: Interval
   readonly idle: Interval
   /** Pieces of the output capacitance as states see them; `banks` lists which banks of the document each one holds. */
-  readonly outputStates: readonly { readonly capacitance: number; readonly esr: number; readonly banks: readonly number[] }[]
+  readonly outputStates: readonly {
+    readonly capacitance: number
+    readonly esr: number
+    readonly banks: readonly number[]
+  }[]
 }
 
 /** @throws DesignError 'singular-network' or 'not-yet-supported'. */

@@ -24,9 +24,19 @@ export type Element =
   /** Current of the input, flowing through the element from `from` to `to`. */
   | (Between & { readonly kind: 'current-source'; readonly source: Input })
   /** State: current from `from` to `to`, named after the element. */
-  | (Between & { readonly kind: 'inductor'; readonly name: string; readonly inductance: number; readonly resistance: number })
+  | (Between & {
+      readonly kind: 'inductor'
+      readonly name: string
+      readonly inductance: number
+      readonly resistance: number
+    })
   /** State: voltage of the ideal capacitance, `from` positive; the ESR is in series. */
-  | (Between & { readonly kind: 'capacitor'; readonly name: string; readonly capacitance: number; readonly esr: number })
+  | (Between & {
+      readonly kind: 'capacitor'
+      readonly name: string
+      readonly capacitance: number
+      readonly esr: number
+    })
   /** Ideal: secondary voltage = ratio·primary voltage; the primary takes ratio times the secondary's current. */
   | {
       readonly kind: 'transformer'

@@ -311,4 +311,3 @@ function noOrbit(circuit: Circuit): DesignError {
 }
 
 const shortNumber = (value: number): string => String(Number(value.toPrecision(4)))
-

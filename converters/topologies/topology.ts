@@ -53,4 +53,3 @@ export interface IdealDiscontinuous {
   readonly pole: number // rad/s
   readonly poleEquation: string
 }
-

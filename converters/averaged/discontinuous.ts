@@ -1,0 +1,136 @@
+/**
+ * Averaged model of discontinuous conduction, full order. The mean inductor current i fixes how long the rectifier
+ * conducts, d₂ = 2i/(m₁·d₁·T) − d₁, and during conduction the current's mean is i/(d₁ + d₂). The inductor's own pole,
+ * far above the others, stays in the model.
+ * Sources: Maksimović and Ćuk, "A unified analysis of PWM converters in discontinuous modes", IEEE Trans. Power
+ * Electronics 1991; Vorpérian, "Simplified analysis of PWM converters using model of PWM switch, part II", IEEE Trans.
+ * AES 1990; Sun, Mitchell, Greuel, Krein and Bass, "Averaged modeling of PWM converters operating in discontinuous
+ * conduction mode", IEEE Trans. Power Electronics 2001 (the correction of the mean current).
+ */
+import { MEASURES, type Circuit, type Interval } from '../circuit'
+import { DesignError } from '../errors'
+import { flatten, solveReal } from '../numeric/linearSystem'
+import { derivative, dot, read } from '../switched/flow'
+import type { LinearModel } from './linearModel'
+
+interface Averages {
+  readonly derivatives: Float64Array
+  readonly output: number
+}
+
+/** Relative step of the central differences below; their error is its square. */
+const STEP = 1e-5
+
+/**
+ * @param dutyCycle - of the switch.
+ * @param guess - mean state to start from.
+ * @throws DesignError 'no-operating-point' if the averaged equations have no rest point near the guess.
+ */
+export function discontinuousModel(circuit: Circuit, dutyCycle: number, guess: Float64Array): LinearModel {
+  const rest = settle(circuit, dutyCycle, guess)
+  const control = controlFor(circuit, rest, circuit.inputs, dutyCycle)
+  const n = rest.length
+  const at = (x: ArrayLike<number>, inputs: readonly number[], v: number) =>
+    averages(circuit, x, inputs, dutyFor(circuit, x, inputs, v))
+  const slope = (size: number, evaluate: (offset: number) => Averages) => {
+    const step = STEP * Math.max(Math.abs(size), 1e-3)
+    const above = evaluate(step)
+    const below = evaluate(-step)
+    return {
+      state: Array.from(above.derivatives, (value, i) => (value - below.derivatives[i]!) / (2 * step)),
+      output: (above.output - below.output) / (2 * step),
+    }
+  }
+  const overStates = Array.from(rest, (value, j) =>
+    slope(value, (offset) => at(moved(rest, j, offset), circuit.inputs, control)),
+  )
+  const [line, load, drop] = circuit.inputs
+  const overInputs = [
+    slope(control, (offset) => at(rest, circuit.inputs, control + offset)),
+    slope(line, (offset) => at(rest, [line + offset, load, drop], control)),
+    slope(circuit.outputCurrent, (offset) => at(rest, [line, load + offset, drop], control)),
+  ]
+  return {
+    A: Array.from({ length: n }, (_, i) => overStates.map((s) => s.state[i]!)),
+    B: Array.from({ length: n }, (_, i) => overInputs.map((s) => s.state[i]!)),
+    C: overStates.map((s) => s.output),
+    D: overInputs.map((s) => s.output),
+  }
+}
+
+const moved = (x: ArrayLike<number>, j: number, offset: number): Float64Array => {
+  const copy = Float64Array.from(x)
+  copy[j]! += offset
+  return copy
+}
+
+/** Time derivatives and output, averaged over a period with switch duty d₁. */
+function averages(circuit: Circuit, x: ArrayLike<number>, inputs: readonly number[], duty: number): Averages {
+  const { on, off, idle, period, stoppingState } = circuit
+  const mean = x[stoppingState]!
+  const rise = risingSlope(circuit, x, inputs)
+  const conducting = (2 * mean) / (rise * duty * period) // d₁ + d₂
+  const whileConducting = moved(x, stoppingState, mean / conducting - mean)
+  const whileIdle = moved(x, stoppingState, -mean)
+  const parts: [Interval, Float64Array, number][] = [
+    [on, whileConducting, duty],
+    [off, whileConducting, conducting - duty],
+    [idle, whileIdle, 1 - conducting],
+  ]
+  const derivatives = new Float64Array(x.length)
+  let output = 0
+  for (const [interval, state, share] of parts) {
+    derivative(interval, state, inputs).forEach((value, i) => (derivatives[i]! += share * value))
+    output += share * read(interval, MEASURES.outputVoltage, state, inputs)
+  }
+  return { derivatives, output }
+}
+
+/** m₁: slope of the inductor current from zero while the switch is on, A/s. */
+function risingSlope({ on, stoppingState }: Circuit, x: ArrayLike<number>, inputs: readonly number[]): number {
+  const fromZero = moved(x, stoppingState, -x[stoppingState]!)
+  return dot(on.A[stoppingState]!, fromZero) + dot(on.B[stoppingState]!, inputs)
+}
+
+/** Duty that a control voltage sets: against the ramp, or where the sensed current plus the slope reaches it. */
+function dutyFor(circuit: Circuit, x: ArrayLike<number>, inputs: readonly number[], control: number): number {
+  return control / comparatorSpan(circuit, x, inputs)
+}
+
+function controlFor(circuit: Circuit, x: ArrayLike<number>, inputs: readonly number[], duty: number): number {
+  return duty * comparatorSpan(circuit, x, inputs)
+}
+
+/** Control voltage per unit of duty, V. */
+function comparatorSpan(circuit: Circuit, x: ArrayLike<number>, inputs: readonly number[]): number {
+  const { modulator } = circuit.design
+  if (modulator.kind === 'voltage-mode') return modulator.rampAmplitude
+  const sensed = circuit.on.C[MEASURES.switchCurrent]![circuit.stoppingState]! * modulator.currentSenseResistance
+  return (sensed * risingSlope(circuit, x, inputs) + modulator.slopeCompensation) * circuit.period
+}
+
+/** Newton on the averaged equations with the duty held. */
+function settle(circuit: Circuit, duty: number, guess: Float64Array): Float64Array {
+  let x = Float64Array.from(guess)
+  const n = x.length
+  for (let step = 0; step < 40; step++) {
+    const here = averages(circuit, x, circuit.inputs, duty).derivatives
+    const jacobian = Array.from({ length: n }, () => new Array<number>(n).fill(0))
+    for (let j = 0; j < n; j++) {
+      const size = STEP * Math.max(Math.abs(x[j]!), 1e-3)
+      const above = averages(circuit, moved(x, j, size), circuit.inputs, duty).derivatives
+      const below = averages(circuit, moved(x, j, -size), circuit.inputs, duty).derivatives
+      for (let i = 0; i < n; i++) jacobian[i]![j] = (above[i]! - below[i]!) / (2 * size)
+    }
+    const change = Float64Array.from(here, (value) => -value)
+    if (!solveReal(flatten(jacobian), n, change, 1)) break
+    x = x.map((value, i) => value + change[i]!)
+    if (!x.every(Number.isFinite)) break
+    if (change.every((value, i) => Math.abs(value) <= 1e-11 * Math.max(Math.abs(x[i]!), 1e-6))) return x
+  }
+  throw DesignError.at(
+    'no-operating-point',
+    'output.currentMinimum',
+    'The averaged equations of discontinuous conduction have no rest point here; the load may be far below what they describe.',
+  )
+}
