@@ -35,7 +35,11 @@ const zones = [
   { target: './hooks', from: ['./app', './components'], message: 'Hooks serve screens and know none of them.' },
   { target: './components', from: './app', message: 'Components serve screens and know none of them.' },
   { target: './constants', from: ['./app', './components', './hooks'], message: 'Constants import nothing of ours.' },
-  { target: ['./server/routes', './server/middleware'], from: './db/schema', message: 'SQL belongs in db/queries.' },
+  {
+    target: ['./server/routes', './server/middleware'],
+    from: ['./db/schema', './db/queries'],
+    message: 'Routes call services, services call queries.',
+  },
 ]
 
 const nodeGlobals = Object.fromEntries(

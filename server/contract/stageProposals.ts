@@ -1,7 +1,7 @@
 import { z } from 'zod'
 
 import { DesignDocument } from '@/converters/document'
-import { StageRequirements } from '@/converters/quickStart'
+import { StageRequirements } from '@/converters/stageRequirements'
 
 export const StageProposalRequest = z.object({ requirements: StageRequirements })
 export type StageProposalRequest = z.infer<typeof StageProposalRequest>

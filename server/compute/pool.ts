@@ -1,0 +1,100 @@
+/** The engine in worker threads, so that a long computation never holds up the server's event loop. */
+import { fileURLToPath } from 'node:url'
+
+import { Piscina } from 'piscina'
+
+import type { TaskRequest, WorkerAnswer, WorkerMessage } from '@/server/compute/messages'
+import { warmUpRequest } from '@/server/compute/warmUp'
+import { AppError } from '@/server/errors'
+
+export interface ComputePoolOptions {
+  readonly threads: number
+  /** Tasks that may wait; the next one is turned away. */
+  readonly queue: number
+  /** From being asked to being answered, waiting included. */
+  readonly timeoutMs: number
+}
+
+export interface ComputePool {
+  /**
+   * Computes the answer, as JSON.
+   * @param gone - Aborted when nobody wants the answer any more.
+   * @throws AppError 'design-refused', 'busy' or 'computation-stopped'
+   */
+  readonly run: (request: TaskRequest, gone?: AbortSignal) => Promise<Uint8Array>
+  /** Starts the threads and loads the engine in each. */
+  readonly warmUp: () => Promise<void>
+  readonly isAlive: () => boolean
+  readonly close: () => Promise<void>
+}
+
+/** What an abandoned task may still use before its thread is ended; nearly all finish sooner, and a thread is dear. */
+const ABANDONED_GRACE_MS = 1_000
+const RETRY_AFTER_SECONDS = 2
+
+const isSource = import.meta.url.endsWith('.ts')
+const workerFile = fileURLToPath(new URL(isSource ? './worker.ts' : './worker.js', import.meta.url))
+
+export function createComputePool({ threads, queue, timeoutMs }: ComputePoolOptions): ComputePool {
+  let isClosed = false
+  let pending = 0
+  const piscina = new Piscina<WorkerMessage, WorkerAnswer>({
+    filename: workerFile,
+    execArgv: isSource ? ['--import', 'tsx'] : [],
+    minThreads: threads,
+    maxThreads: threads,
+  })
+
+  async function run(request: TaskRequest, gone?: AbortSignal): Promise<Uint8Array> {
+    if (pending >= threads + queue) throw busy()
+    const started = new Int32Array(new SharedArrayBuffer(Int32Array.BYTES_PER_ELEMENT))
+    const stop = new AbortController()
+    const timeout = setTimeout(() => stop.abort(), timeoutMs)
+    let grace: NodeJS.Timeout | undefined
+    const abandon = () => {
+      if (Atomics.load(started, 0) === 0) stop.abort()
+      else grace = setTimeout(() => stop.abort(), ABANDONED_GRACE_MS)
+    }
+    if (gone?.aborted) abandon()
+    else gone?.addEventListener('abort', abandon, { once: true })
+    pending += 1
+    try {
+      return jsonOf(await piscina.run({ request, started }, { signal: stop.signal }))
+    } catch (error) {
+      if (!stop.signal.aborted) throw error
+      throw new AppError('computation-stopped', {
+        detail: `No answer within ${timeoutMs / 1000} s. Ask for fewer frequencies, or try again in a moment.`,
+        headers: { 'Retry-After': String(RETRY_AFTER_SECONDS) },
+      })
+    } finally {
+      pending -= 1
+      clearTimeout(timeout)
+      clearTimeout(grace)
+      gone?.removeEventListener('abort', abandon)
+    }
+  }
+
+  return {
+    run,
+    warmUp: async () => {
+      await Promise.all(Array.from({ length: threads }, () => run(warmUpRequest)))
+    },
+    isAlive: () => !isClosed && piscina.threads.length > 0,
+    close: async () => {
+      isClosed = true
+      await piscina.destroy()
+    },
+  }
+}
+
+function jsonOf(answer: WorkerAnswer): Uint8Array {
+  if (answer.kind === 'answered') return answer.json
+  throw new AppError('design-refused', { detail: answer.message, errors: answer.problems })
+}
+
+function busy(): AppError {
+  return new AppError('busy', {
+    detail: `Try again in ${RETRY_AFTER_SECONDS} seconds.`,
+    headers: { 'Retry-After': String(RETRY_AFTER_SECONDS) },
+  })
+}

@@ -1,0 +1,32 @@
+import { analyse, analyseCorners, proposeCompensator, proposeStage } from '@/converters'
+import { DesignDocument } from '@/converters/document'
+import type { TaskRequest } from '@/server/compute/messages'
+import type { Analysis } from '@/server/contract/analyses'
+import type { CompensatorProposals } from '@/server/contract/compensators'
+import type { CornerSet } from '@/server/contract/corners'
+import type { StageProposal } from '@/server/contract/stageProposals'
+
+type Answer = Analysis | CornerSet | CompensatorProposals | StageProposal
+
+/** Runs one task on the engine. The return type holds the engine to the contract. @throws DesignError */
+export function compute(request: TaskRequest): Answer {
+  switch (request.task) {
+    case 'analysis': {
+      const { design, operatingPoint, frequencies } = request.input
+      return analyse(design, { operatingPoint, frequencies }) satisfies Analysis
+    }
+    case 'corners': {
+      const { design, frequencies } = request.input
+      return analyseCorners(design, { frequencies }) satisfies CornerSet
+    }
+    case 'compensators': {
+      const { design, options } = request.input
+      return proposeCompensator(design, options) satisfies CompensatorProposals
+    }
+    case 'stageProposal': {
+      const { design, choices } = proposeStage(request.input.requirements)
+      // The whole document, so that what is shown and saved has every value in it.
+      return { design: DesignDocument.parse(design), choices } satisfies StageProposal
+    }
+  }
+}

@@ -1,0 +1,54 @@
+import { createServer } from 'node:http'
+import type { AddressInfo } from 'node:net'
+import { fileURLToPath } from 'node:url'
+
+import { connectDatabase } from '@/db/client'
+import { createApp } from '@/server/app'
+import { createComputePool } from '@/server/compute/pool'
+import { type Env, EnvError, readEnv } from '@/server/env'
+import { createLogger } from '@/server/logger'
+import { closeOnSignal } from '@/server/shutdown'
+
+// Holds from the sources (server/) and from the bundle (build/): both lie one step below the root.
+const webRoot = fileURLToPath(new URL('../dist', import.meta.url))
+
+function readEnvOrExit(): Env {
+  try {
+    return readEnv(process.env)
+  } catch (error) {
+    if (!(error instanceof EnvError)) throw error
+    console.error(error.message)
+    process.exit(1)
+  }
+}
+
+const env = readEnvOrExit()
+const logger = createLogger(env)
+const database = connectDatabase({
+  url: env.DATABASE_URL,
+  poolSize: env.DATABASE_POOL_SIZE,
+  onIdleError: (error) => logger.error({ err: error }, 'a database connection broke'),
+})
+const compute = createComputePool({
+  threads: env.COMPUTE_THREADS,
+  queue: env.COMPUTE_QUEUE,
+  timeoutMs: env.COMPUTE_TIMEOUT_MS,
+})
+const server = createServer(createApp({ db: database.db, compute, logger, env, webRoot }))
+
+server.on('error', (error: NodeJS.ErrnoException) => {
+  const isTaken = error.code === 'EADDRINUSE'
+  console.error(
+    isTaken
+      ? `Port ${env.PORT} on ${env.HOST} is taken. Stop what uses it, or set PORT to another one.`
+      : error.message,
+  )
+  process.exit(1)
+})
+
+await compute.warmUp()
+server.listen(env.PORT, env.HOST, () => {
+  const { address, port } = server.address() as AddressInfo
+  logger.info({ address, port }, 'listening')
+})
+closeOnSignal({ server, compute, database, logger, graceMs: env.SHUTDOWN_GRACE_MS })

@@ -1,0 +1,33 @@
+import { type RequestHandler, Router } from 'express'
+
+import type { ComputePool } from '@/server/compute/pool'
+import type { TaskRequest } from '@/server/compute/messages'
+import { AnalysisRequest } from '@/server/contract/analyses'
+import { CompensatorsRequest } from '@/server/contract/compensators'
+import { CornersRequest } from '@/server/contract/corners'
+import { StageProposalRequest } from '@/server/contract/stageProposals'
+import { methodNotAllowed } from '@/server/middleware/notFound'
+import { parse } from '@/server/middleware/parse'
+
+/** Routes that hand a checked request to the engine and pass its answer on. */
+export function computeRoutes(compute: ComputePool): Router {
+  const answer =
+    (read: (body: unknown) => TaskRequest): RequestHandler =>
+    async (req, res) => {
+      const request = read(req.body)
+      const gone = new AbortController()
+      res.on('close', () => gone.abort())
+      const json = await compute.run(request, gone.signal)
+      if (!res.destroyed) res.type('json').send(json)
+    }
+
+  const router = Router()
+  const post = (path: string, read: (body: unknown) => TaskRequest) =>
+    router.route(path).post(answer(read)).all(methodNotAllowed('POST'))
+
+  post('/analyses', (body) => ({ task: 'analysis', input: parse(AnalysisRequest, body) }))
+  post('/corners', (body) => ({ task: 'corners', input: parse(CornersRequest, body) }))
+  post('/compensators', (body) => ({ task: 'compensators', input: parse(CompensatorsRequest, body) }))
+  post('/stage-proposals', (body) => ({ task: 'stageProposal', input: parse(StageProposalRequest, body) }))
+  return router
+}
