@@ -1,5 +1,5 @@
 import { execFileSync } from 'node:child_process'
-import fc from 'fast-check'
+import * as fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import {
   buildNetwork,
@@ -110,8 +110,9 @@ describe('the gain of an error amplifier', () => {
   })
 
   it('is that of its state equations, over frequency, for any parts', () => {
+    // Time constants go down to 0.1 ns, so below 1 kHz the rounding of the matrix itself comes near the tolerance.
     fc.assert(
-      fc.property(anyCompensator, anyAmplifier, logarithmic(1, 1e7), (compensator, amplifier, frequency) => {
+      fc.property(anyCompensator, anyAmplifier, logarithmic(1e3, 1e7), (compensator, amplifier, frequency) => {
         const network = buildNetwork({ amplifier, sense, output }, compensator)
         const expected = gainFromStates(networkStateSpace(network), TAU * frequency)
         expect(relativeError(networkGain(network, TAU * frequency), expected)).toBeLessThan(1e-9)

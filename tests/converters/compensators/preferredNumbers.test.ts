@@ -1,4 +1,4 @@
-import fc from 'fast-check'
+import * as fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { PREFERRED_SERIES } from '@/converters/compensators/options'
 import { nearestValues, ownValues, preferredDecade, preferredValues } from '@/converters/compensators/preferredNumbers'
