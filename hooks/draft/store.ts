@@ -1,0 +1,95 @@
+/** The draft of this browser: one store that every screen reads, kept in local storage, shared between its tabs. */
+import type { DesignDocument } from '@/converters/document'
+import { settle, type Texts } from './entries'
+import { DRAFT_KEY, newDraft, readDraft, type Draft, type PointChoice, type SeriesChoice, type StoredDraft } from './schema'
+
+const MOST_UNDO = 30
+const listeners = new Set<() => void>()
+let undone: readonly Draft[] = []
+let current: StoredDraft = load()
+
+function storage(): Storage | null {
+  try {
+    return typeof window === 'undefined' ? null : window.localStorage
+  } catch {
+    return null // forbidden by the browser's settings: the draft then lives as long as the page
+  }
+}
+
+function load(): StoredDraft {
+  return readDraft(storage()?.getItem(DRAFT_KEY) ?? null)
+}
+
+function set(next: StoredDraft): void {
+  current = next
+  if (next.kind === 'draft') {
+    try {
+      storage()?.setItem(DRAFT_KEY, JSON.stringify(next.draft))
+    } catch {
+      // Storage is full or forbidden: the page goes on with what it holds.
+    }
+  }
+  for (const listener of listeners) listener()
+}
+
+function change(update: (draft: Draft) => Draft): void {
+  if (current.kind === 'draft') set({ kind: 'draft', draft: update(current.draft) })
+}
+
+/** A change that can be taken back in one step. */
+function changeWithUndo(update: (draft: Draft) => Draft): void {
+  if (current.kind !== 'draft') return
+  undone = [...undone, current.draft].slice(-MOST_UNDO)
+  change(update)
+}
+
+export const draftStore = {
+  read: (): StoredDraft => current,
+  canUndo: (): boolean => undone.length > 0,
+
+  subscribe(listener: () => void): () => void {
+    const onStorage = (event: StorageEvent) => {
+      if (event.key === DRAFT_KEY) set(load())
+    }
+    if (listeners.size === 0 && typeof window !== 'undefined') window.addEventListener?.('storage', onStorage)
+    listeners.add(listener)
+    return () => {
+      listeners.delete(listener)
+      if (listeners.size === 0 && typeof window !== 'undefined') window.removeEventListener?.('storage', onStorage)
+    }
+  },
+
+  /** Begins with a whole design: from the quick start, a sample, a link or a file. */
+  open(design: DesignDocument): void {
+    if (current.kind === 'draft') undone = [...undone, current.draft].slice(-MOST_UNDO)
+    set({ kind: 'draft', draft: newDraft(design) })
+  },
+
+  /** One entry, as typed. */
+  type(path: string, text: string): void {
+    change((draft) => withTexts(draft, draft.design, { ...draft.texts, [path]: text }))
+  },
+
+  /** A change of the design that is not typed: a choice, a bank more or less, a proposal taken over. */
+  edit(update: (design: DesignDocument) => DesignDocument, dropTexts: (path: string) => boolean = () => false): void {
+    changeWithUndo((draft) => {
+      const texts = Object.fromEntries(Object.entries(draft.texts).filter(([path]) => !dropTexts(path)))
+      return withTexts(draft, update(draft.design), texts)
+    })
+  },
+
+  choosePoint: (point: PointChoice): void => change((draft) => ({ ...draft, point })),
+  chooseSeries: (series: SeriesChoice): void => change((draft) => ({ ...draft, series })),
+
+  undo(): void {
+    const last = undone.at(-1)
+    if (!last) return
+    undone = undone.slice(0, -1)
+    set({ kind: 'draft', draft: last })
+  },
+}
+
+function withTexts(draft: Draft, design: DesignDocument, texts: Texts): Draft {
+  const settled = settle(design, texts)
+  return { ...draft, design: settled.design, texts: { ...settled.texts } }
+}
