@@ -14,7 +14,7 @@ import type { Orbit } from './orbit'
 export function periodMatrix(orbit: Orbit, events: readonly SwitchingEvent[]): number[][] {
   const n = orbit.segments[0]!.start.length
   const columns = Array.from({ length: n }, (_, j) => {
-    let x = Array.from({ length: n }, (_, i) => (i === j ? 1 : 0))
+    let x = Array.from({ length: n }, (_, i): number => (i === j ? 1 : 0))
     orbit.segments.forEach(({ transition }, k) => {
       x = x.map((_, i) => x.reduce((sum, value, m) => sum + transition[i * n + m]! * value, 0))
       const event = events[k]

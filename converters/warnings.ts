@@ -1,0 +1,141 @@
+/** What a reviewer would point at, in sentences. */
+import type { DesignDocument } from './document'
+import type { Analysis, ResponseCurve, Warning } from './results'
+
+/** Direct voltage above which contact is taken to be dangerous: the usual extra-low-voltage limit, V. */
+const EXTRA_LOW_VOLTAGE = 60
+
+/** Averaged and switched curves part from here on. */
+const APART = { gainDb: 1, phaseDeg: 10 }
+
+type Computed = Omit<Analysis, 'warnings'>
+
+export function warningsFor(design: DesignDocument, analysis: Computed, rightHalfPlaneZero: number | null): Warning[] {
+  return [
+    ...orbitWarnings(analysis),
+    ...marginWarnings(design, analysis, rightHalfPlaneZero),
+    ...modelWarnings(analysis),
+    ...stageWarnings(design, analysis),
+  ]
+}
+
+function orbitWarnings({ periodMap }: Computed): Warning[] {
+  if (periodMap.isStable) return []
+  const isAlternating = periodMap.multipliers.some((m) => m.modulus >= 1 && m.real < 0 && Math.abs(m.imaginary) < 1e-6)
+  if (!isAlternating) {
+    return [
+      {
+        code: 'unstable-orbit',
+        message:
+          'Without feedback a disturbance of the power stage grows from period to period; only a loop that is fast enough can hold it.',
+        field: 'load',
+      },
+    ]
+  }
+  const cure =
+    periodMap.slopeNeeded === null
+      ? 'More inductance or a lower duty cycle is needed.'
+      : `Slope compensation above ${round(periodMap.slopeNeeded)} V/s cures it.`
+  return [
+    {
+      code: 'subharmonic-oscillation',
+      message: `The inductor current alternates from period to period: it oscillates at half the switching frequency. ${cure}`,
+      field: 'modulator.slopeCompensation',
+    },
+  ]
+}
+
+function marginWarnings(
+  { switchingFrequency }: DesignDocument,
+  { margins }: Computed,
+  rightHalfPlaneZero: number | null,
+): Warning[] {
+  if (!margins) return []
+  const warnings: Warning[] = []
+  const add = (code: Warning['code'], message: string) => warnings.push({ code, message, field: 'compensator' })
+  if (!margins.isStable) add('unstable-loop', 'The loop is unstable: the loop gain encircles the critical point.')
+  if (margins.isStable && margins.gainReductionMargin !== null) {
+    add(
+      'conditionally-stable',
+      `The loop is stable only while its gain stays up: a fall by ${margins.gainReductionMargin.toFixed(1)} dB makes it oscillate, for example at start-up or when the amplifier saturates.`,
+    )
+  }
+  if (margins.gainCrossings.length > 1) {
+    add(
+      'several-crossovers',
+      `The loop gain passes 0 dB ${margins.gainCrossings.length} times; the smallest phase margin of all of them is shown.`,
+    )
+  }
+  const { crossover } = margins
+  if (crossover === null) return warnings
+  if (rightHalfPlaneZero !== null && crossover > rightHalfPlaneZero / 3) {
+    add(
+      'crossover-above-right-half-plane-zero',
+      `The crossover lies above a third of the right-half-plane zero at ${round(rightHalfPlaneZero)} Hz (common practice); corners will eat the phase margin.`,
+    )
+  }
+  if (crossover > switchingFrequency / 5) {
+    add(
+      'crossover-near-switching',
+      'The crossover lies above a fifth of the switching frequency (common practice); ripple at the amplifier output disturbs the comparator.',
+    )
+  }
+  return warnings
+}
+
+function modelWarnings({ frequencies, loop, margins }: Computed): Warning[] {
+  if (!loop || !margins || margins.crossover === null) return []
+  const parting = firstParting(frequencies, loop.response.averaged, loop.response.switched)
+  if (parting === null || parting > 2 * margins.crossover) return []
+  return [
+    {
+      code: 'models-part',
+      message: `Averaged and switched model differ by more than ${APART.gainDb} dB or ${APART.phaseDeg}° from ${round(parting)} Hz on; the margins are read from the switched one.`,
+      field: null,
+    },
+  ]
+}
+
+function firstParting(frequencies: readonly number[], a: ResponseCurve, b: ResponseCurve): number | null {
+  const index = a.findIndex((point, i) => {
+    const other = b[i]!
+    const phase = point.phaseDeg - other.phaseDeg
+    const apart = Math.abs(phase - 360 * Math.round(phase / 360))
+    return Math.abs(point.gainDb - other.gainDb) > APART.gainDb || apart > APART.phaseDeg
+  })
+  return index < 0 ? null : frequencies[index]!
+}
+
+function stageWarnings(design: DesignDocument, { operatingPoint }: Computed): Warning[] {
+  const warnings: Warning[] = []
+  if (operatingPoint.dutyCycle > 0.95 * design.dutyLimit) {
+    warnings.push({
+      code: 'duty-near-limit',
+      message: `The duty cycle of ${(100 * operatingPoint.dutyCycle).toFixed(1)} % leaves little below the limit of ${(100 * design.dutyLimit).toFixed(0)} %: the loop cannot push further in a load step.`,
+      field: 'line.minimum',
+    })
+  }
+  if (operatingPoint.outputRipple > 0.05 * design.output.voltage) {
+    warnings.push({
+      code: 'ripple-large',
+      message: `The output ripple is ${((100 * operatingPoint.outputRipple) / design.output.voltage).toFixed(1)} % of the output; averaging takes it to be small.`,
+      field: 'outputCapacitors',
+    })
+  }
+  const highest = Math.max(
+    design.line.maximum,
+    design.output.voltage,
+    operatingPoint.switchVoltage,
+    operatingPoint.rectifierVoltage,
+  )
+  if (highest > EXTRA_LOW_VOLTAGE) {
+    warnings.push({
+      code: 'hazardous-voltage',
+      message: `A node reaches ${round(highest)} V, above ${EXTRA_LOW_VOLTAGE} V DC. Isolation, creepage and stored charge need care; use injection equipment rated and isolated for the node; work by qualified people under the local electrical safety code.`,
+      field: null,
+    })
+  }
+  return warnings
+}
+
+const round = (value: number): string => String(Number(value.toPrecision(3)))
