@@ -1,3 +1,4 @@
+import { once } from 'node:events'
 import { createServer } from 'node:http'
 import type { AddressInfo } from 'node:net'
 import { fileURLToPath } from 'node:url'
@@ -47,8 +48,11 @@ server.on('error', (error: NodeJS.ErrnoException) => {
 })
 
 await compute.warmUp()
-server.listen(env.PORT, env.HOST, () => {
-  const { address, port } = server.address() as AddressInfo
-  logger.info({ address, port }, 'listening')
-})
 closeOnSignal({ server, compute, database, logger, graceMs: env.SHUTDOWN_GRACE_MS })
+server.listen(env.PORT, env.HOST)
+await once(server, 'listening')
+
+const { port } = server.address() as AddressInfo
+/** Where the product can be opened, once it is ready. */
+export const address = `http://${env.HOST}:${port}`
+logger.info({ address }, 'listening')

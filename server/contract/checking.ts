@@ -40,9 +40,9 @@ function messageOf(issue: z.core.$ZodRawIssue): string | undefined {
         ? `Must be one of ${issue.options.join(', ')}.`
         : 'Has none of the known forms.'
     case 'too_small':
-      return `Must be at least ${issue.minimum}.`
+      return `Must be ${issue.inclusive === false ? 'more than' : 'at least'} ${issue.minimum}.`
     case 'too_big':
-      return `Must be at most ${issue.maximum}.`
+      return `Must be ${issue.inclusive === false ? 'less than' : 'at most'} ${issue.maximum}.`
     case 'invalid_format':
       return 'Is not written as it should be.'
     default:

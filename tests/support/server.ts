@@ -1,0 +1,71 @@
+import { once } from 'node:events'
+import { createServer } from 'node:http'
+import type { AddressInfo } from 'node:net'
+import { fileURLToPath } from 'node:url'
+
+import { pino } from 'pino'
+
+import { connectDatabase, type Database } from '@/db/client'
+import { migrateDatabase } from '@/db/migrate'
+import { seedSamples } from '@/db/seed/seedSamples'
+import { createApp } from '@/server/app'
+import { type ComputePool, type ComputePoolOptions, createComputePool } from '@/server/compute/pool'
+import { createTestDatabase } from '@/tests/support/database'
+
+export interface TestServer {
+  readonly origin: string
+  readonly db: Database
+  readonly compute: ComputePool
+  /** Every line that the server has logged. */
+  readonly logLines: readonly string[]
+  readonly post: (path: string, body: unknown, init?: RequestInit) => Promise<Response>
+  readonly stop: () => Promise<void>
+}
+
+interface TestServerOptions {
+  readonly compute?: Partial<ComputePoolOptions>
+  readonly rateLimitPerMinute?: number
+}
+
+const webRoot = fileURLToPath(new URL('./web', import.meta.url))
+
+/** The real app on a free port with real worker threads and a seeded database of its own. */
+export async function startTestServer({
+  compute: computeOptions,
+  rateLimitPerMinute = 1_000_000,
+}: TestServerOptions = {}): Promise<TestServer> {
+  const database = await createTestDatabase()
+  const connection = connectDatabase({ url: database.url, poolSize: 2, onIdleError: () => undefined })
+  await migrateDatabase(connection.db)
+  await seedSamples(connection.db)
+
+  const logLines: string[] = []
+  const logger = pino({ level: 'info' }, { write: (line: string) => void logLines.push(line) })
+  const compute = createComputePool({ threads: 1, queue: 50, timeoutMs: 20_000, ...computeOptions })
+  const env = { RATE_LIMIT_PER_MINUTE: rateLimitPerMinute, TRUSTED_PROXIES: 0 }
+  const server = createServer(createApp({ db: connection.db, compute, logger, env, webRoot }))
+  server.listen(0, '127.0.0.1')
+  await once(server, 'listening')
+  const origin = `http://127.0.0.1:${(server.address() as AddressInfo).port}`
+
+  return {
+    origin,
+    db: connection.db,
+    compute,
+    logLines,
+    post: (path, body, init) =>
+      fetch(`${origin}/api/v1${path}`, {
+        method: 'POST',
+        headers: { 'Content-Type': 'application/json' },
+        body: typeof body === 'string' ? body : JSON.stringify(body),
+        ...init,
+      }),
+    stop: async () => {
+      server.closeAllConnections()
+      server.close()
+      await compute.close()
+      await connection.close()
+      await database.drop()
+    },
+  }
+}
