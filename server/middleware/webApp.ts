@@ -17,7 +17,7 @@ export function webApp(root: string): RequestHandler {
   router.use(
     expressStaticGzip(root, {
       enableBrotli: true,
-      orderPreference: ['br', 'gz'],
+      orderPreference: ['br'],
       serveStatic: { setHeaders: (res, path) => res.setHeader('Cache-Control', cacheHeader(path)) },
     }),
   )

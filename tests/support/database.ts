@@ -31,5 +31,5 @@ export async function createTestDatabase(): Promise<TestDatabase> {
   await asAdmin(`create database ${name}`)
   const url = new URL(adminUrl())
   url.pathname = `/${name}`
-  return { url: url.href, drop: () => asAdmin(`drop database ${name} with (force)`) }
+  return { url: url.href, drop: () => asAdmin(`drop database if exists ${name} with (force)`) }
 }

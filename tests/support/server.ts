@@ -18,6 +18,7 @@ export interface TestServer {
   readonly compute: ComputePool
   /** Every line that the server has logged. */
   readonly logLines: readonly string[]
+  readonly dropDatabase: () => Promise<void>
   readonly post: (path: string, body: unknown, init?: RequestInit) => Promise<Response>
   readonly stop: () => Promise<void>
 }
@@ -53,6 +54,7 @@ export async function startTestServer({
     db: connection.db,
     compute,
     logLines,
+    dropDatabase: database.drop,
     post: (path, body, init) =>
       fetch(`${origin}/api/v1${path}`, {
         method: 'POST',
