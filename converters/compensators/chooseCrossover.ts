@@ -1,0 +1,122 @@
+/** Which crossover and type to suggest: the highest at which every corner holds, or the reason why there is none. */
+import type { CompensatorType } from '../document'
+import { formatQuantity } from '../quantities'
+import type { CrossoverWindow } from '../results'
+import { attemptKFactor, boostFor, goalAt, typeFor, type Attempt } from './attempts'
+import type { CornerPlants } from './cornerPlants'
+import { LARGEST_BOOST } from './kFactor'
+import { rightHalfPlaneZero } from '../plant'
+
+export interface ChoiceRequest {
+  readonly plants: CornerPlants
+  readonly window: CrossoverWindow
+  readonly upperResistance: number // Ω
+  readonly wanted: number | null // Hz
+  readonly type: CompensatorType | null
+}
+
+export type Choice =
+  | {
+      readonly kind: 'choice'
+      readonly attempt: Attempt
+      readonly how: 'wanted' | 'highest' | 'nearest' | 'slow-integrator'
+    }
+  | { readonly kind: 'refusal'; readonly message: string }
+
+const TAU = 2 * Math.PI
+const STEPS_PER_DECADE = 24
+/** The window's lower end may lie decades down; nobody wants a crossover that far below its upper end. */
+const SEARCHED_DECADES = 1.3
+const SLOW_DECADES = 3
+/** With this share of the targets still held, a crossover in the window is better than a slow integrator. */
+const TOLERABLE_SLACK = -0.25
+
+const refusal = (message: string): Choice => ({ kind: 'refusal', message })
+const hertz = (frequency: number) => formatQuantity(frequency, 'Hz')
+
+export function chooseCrossover(request: ChoiceRequest): Choice {
+  return request.wanted === null ? search(request) : takeWanted(request, request.wanted)
+}
+
+function takeWanted(request: ChoiceRequest, wanted: number): Choice {
+  const { plants, type } = request
+  const { targets, switchingFrequency } = plants.design
+  if (wanted >= switchingFrequency / 2) {
+    return refusal(
+      `A crossover of ${hertz(wanted)} is not below half the switching frequency, ${hertz(switchingFrequency / 2)}; a loop that samples once a period cannot cross there.`,
+    )
+  }
+  const zero = lowestZero(plants)
+  if (zero !== null && wanted >= zero) {
+    return refusal(
+      `The lowest right-half-plane zero is at ${hertz(zero)}, below the wanted crossover of ${hertz(wanted)}. No network can make a loop that crosses there settle; ask for ${hertz(zero / 3)} or less.`,
+    )
+  }
+  const goal = goalAt(plants, TAU * wanted)
+  const boost = boostFor(goal, targets.phaseMargin)
+  const limit = type === null ? LARGEST_BOOST.III : LARGEST_BOOST[type]
+  const attempt = attemptKFactor({ ...request, goal })
+  if (attempt) return { kind: 'choice', attempt, how: 'wanted' }
+  const lag = (-goal.plantPhase).toFixed(0)
+  const adds =
+    type === null ? 'type III, the largest network, adds less than 180°' : `type ${type} adds less than ${limit}°`
+  const reason =
+    boost >= limit
+      ? adds
+      : `that is out of reach of type ${type ?? typeFor(boost) ?? 'III'} with this amplifier and divider`
+  return refusal(
+    `At ${hertz(wanted)} the plant lags by ${lag}°, so a phase margin of ${targets.phaseMargin}° needs ${boost.toFixed(0)}° of boost; ${reason}. Ask for a lower crossover.`,
+  )
+}
+
+function search(request: ChoiceRequest): Choice {
+  const { plants, window, type } = request
+  const inWindow = window.lower < window.upper ? bestBetween(request, window.lower, window.upper) : null
+  if (inWindow && inWindow.holds) return { kind: 'choice', attempt: inWindow.attempt, how: 'highest' }
+  const slow = type === null || type === 'I' ? slowIntegrator(request) : null
+  if (slow && !(inWindow && inWindow.attempt.slack >= TOLERABLE_SLACK)) {
+    return { kind: 'choice', attempt: slow, how: 'slow-integrator' }
+  }
+  if (inWindow && inWindow.attempt.slack > -1) return { kind: 'choice', attempt: inWindow.attempt, how: 'nearest' }
+  const { phaseMargin, gainMargin } = plants.design.targets
+  const which = type === null ? 'No network of type I, II or III' : `No network of type ${type}`
+  const bounds =
+    window.lower < window.upper ? '' : ` The window is empty: ${window.bounds.map(({ text }) => text).join(' ')}`
+  return refusal(
+    `${which} keeps ${phaseMargin}° and ${gainMargin} dB, or comes near, at every corner of line and load.${bounds}`,
+  )
+}
+
+/** From the top of the window down: the first crossover at which all corners hold and stay inside, else the nearest. */
+function bestBetween(request: ChoiceRequest, lower: number, upper: number) {
+  const { plants } = request
+  let nearest: Attempt | null = null
+  for (const frequency of descending(upper, Math.max(lower, upper / 10 ** SEARCHED_DECADES))) {
+    const attempt = attemptKFactor({ ...request, goal: goalAt(plants, TAU * frequency) })
+    if (!attempt || attempt.highestCrossover > TAU * upper) continue
+    if (attempt.slack >= 0) return { attempt, holds: true }
+    if (nearest === null || attempt.slack > nearest.slack) nearest = attempt
+  }
+  return nearest && { attempt: nearest, holds: false }
+}
+
+/** An integrator so slow that even the resonance's peak stays below the gain margin. */
+function slowIntegrator(request: ChoiceRequest): Attempt | null {
+  const { plants, window } = request
+  const top = Math.min(window.lower || window.upper, window.upper)
+  for (const frequency of descending(top, top / 10 ** SLOW_DECADES)) {
+    const attempt = attemptKFactor({ ...request, type: 'I', goal: goalAt(plants, TAU * frequency) })
+    if (attempt && attempt.slack >= 0) return attempt
+  }
+  return null
+}
+
+function* descending(from: number, to: number): Generator<number> {
+  const steps = Math.floor(Math.log10(from / to) * STEPS_PER_DECADE)
+  for (let i = 0; i <= steps; i++) yield from * 10 ** (-i / STEPS_PER_DECADE)
+}
+
+const lowestZero = ({ corners }: CornerPlants): number | null => {
+  const zeros = corners.flatMap(({ plant }) => rightHalfPlaneZero(plant.zeros) ?? [])
+  return zeros.length > 0 ? Math.min(...zeros) : null
+}

@@ -1,0 +1,141 @@
+/**
+ * The compensator wizard: the window for the crossover, a suggestion, networks by two methods in preferred values,
+ * their margins at every corner of line and load, and a plain no where nothing can work.
+ */
+import type { DesignDocument } from '../document'
+import { describeNetworkRoots } from '../loop/networkRoles'
+import { invalid, parseDesign, problemsOf } from '../parse'
+import { formatQuantity } from '../quantities'
+import type { CompensatorProposals, Proposal } from '../results'
+import { boostFor, type Attempt, type AttemptRequest } from './attempts'
+import { chooseCrossover } from './chooseCrossover'
+import { readCorners, summariseCorners } from './cornerMargins'
+import { openCorners, type CornerPlants } from './cornerPlants'
+import { buildNetwork, networkRoots } from './networks'
+import { CompensatorOptions, type CompensatorOptionsInput } from './options'
+import { attemptPlaced } from './placed'
+import { pairRoots, placeNetwork } from './placement'
+import { marginSlack, quickMargins } from './quickMargins'
+import { networkReasons, shortfalls, suggestionReasons } from './sentences'
+import { snapNetwork, stockOf, type Stock } from './snapping'
+import { crossoverWindow } from './window'
+
+/**
+ * @param design - a design document, checked here.
+ * @param options - see `CompensatorOptions`; left out, the wizard chooses.
+ * @throws DesignError at the field that is wrong; for an amplifier or a topology that cannot be computed; for a corner of
+ * line and load that the power stage cannot reach.
+ */
+export function proposeCompensator(design: unknown, options: CompensatorOptionsInput = {}): CompensatorProposals {
+  const document = parseDesign(design)
+  const checked = parseOptions(options)
+  const stock = stockOf(checked)
+  checkAmplifier(document)
+  const plants = openCorners(document)
+  const window = crossoverWindow(plants)
+  const refused = (refusal: string): CompensatorProposals => ({ window, suggestion: null, proposals: [], refusal })
+  const unstable = unstableOrbit(plants)
+  if (unstable !== null) return refused(unstable)
+
+  const upperResistance = document.compensator?.parts.R1 || document.sense.upperResistance
+  const wanted = checked.crossover ?? document.targets.crossover
+  const type = checked.type ?? null
+  const choice = chooseCrossover({ plants, window, upperResistance, wanted, type })
+  if (choice.kind === 'refusal') return refused(choice.message)
+  const { goal, ideal } = choice.attempt
+  const request = { plants, upperResistance, goal, type: ideal.type }
+  const attempts = checked.placement
+    ? [attemptByHand(request, checked.placement)]
+    : [choice.attempt, attemptPlaced(request)].filter((attempt) => attempt !== null)
+  const evaluated = attempts.map((attempt) =>
+    evaluate(plants, attempt, { stock, options: checked, window, byHand: checked.placement !== undefined }),
+  )
+  return {
+    window,
+    suggestion: {
+      crossover: goal.omega / (2 * Math.PI),
+      type: ideal.type,
+      phaseBoost: boostFor(goal, document.targets.phaseMargin),
+      reasons: suggestionReasons(plants, window, choice, type !== null),
+    },
+    proposals: evaluated.sort(byMerit(document)),
+    refusal: null,
+  }
+}
+
+function parseOptions(options: unknown): CompensatorOptions {
+  const result = CompensatorOptions.safeParse(options)
+  if (result.success) return result.data
+  throw invalid(
+    problemsOf(result.error).map(({ field, message }) => ({ field: field ? `options.${field}` : 'options', message })),
+  )
+}
+
+/** Refuses an amplifier or a divider that cannot be computed before anything else is. */
+function checkAmplifier(design: DesignDocument): void {
+  buildNetwork(design, { type: 'I', parts: { C1: 1e-9 } })
+}
+
+/** Current mode that oscillates by itself cannot be cured by the voltage loop. */
+function unstableOrbit({ corners }: CornerPlants): string | null {
+  const found = corners
+    .filter(({ plant }) => !plant.periodMap.isStable && plant.periodMap.slopeNeeded !== null)
+    .sort((a, b) => b.plant.periodMap.slopeNeeded! - a.plant.periodMap.slopeNeeded!)[0]
+  if (!found) return null
+  const slope = formatQuantity(found.plant.periodMap.slopeNeeded!, 'V/s')
+  const [line, load] = [formatQuantity(found.lineVoltage, 'V'), formatQuantity(found.outputCurrent, 'A')]
+  return `At ${line} and ${load} the current loop oscillates at half the switching frequency by itself (subharmonic oscillation), and no voltage loop can cure that. It takes a slope compensation above ${slope}.`
+}
+
+/** @throws DesignError at the placement when its zeros and poles make no network. */
+function attemptByHand(
+  { plants, upperResistance, goal }: AttemptRequest,
+  { zeros, poles }: NonNullable<CompensatorOptions['placement']>,
+): Attempt {
+  const placement = pairRoots(zeros, poles)
+  const ideal = 'kind' in placement ? placement : placeNetwork(plants.design, upperResistance, placement, goal)
+  if (ideal.kind === 'problem') throw invalid([{ field: 'options.placement', message: ideal.message }])
+  const { targets } = plants.design
+  const boostDeg = boostFor(goal, targets.phaseMargin)
+  return { method: 'placed', goal, boostDeg, ideal, ...quickMargins(plants, ideal.network, targets) }
+}
+
+interface Evaluation {
+  readonly stock: Stock
+  readonly options: CompensatorOptions
+  readonly window: CompensatorProposals['window']
+  readonly byHand: boolean
+}
+
+function evaluate(plants: CornerPlants, attempt: Attempt, { stock, options, window, byHand }: Evaluation): Proposal {
+  const { ideal, goal, method } = attempt
+  const { parts, network } = snapNetwork(plants, ideal, goal.omega, stock)
+  const read = readCorners(plants, network)
+  const margins = {
+    ideal: summariseCorners(readCorners(plants, ideal.network), plants),
+    preferred: summariseCorners(read, plants),
+  }
+  const { poles, zeros } = networkRoots(network)
+  const roots = describeNetworkRoots(network, poles, zeros)
+  return {
+    type: ideal.type,
+    method,
+    crossover: goal.omega / (2 * Math.PI),
+    parts: { ideal: ideal.parts, preferred: parts },
+    poles: roots.compensatorPoles,
+    zeros: roots.compensatorZeros,
+    margins,
+    reasons: networkReasons(plants, { attempt, preferred: parts, margins, options, byHand }),
+    shortfalls: shortfalls(plants, window, read, { attempt, preferred: parts, options }),
+  }
+}
+
+/** Those that hold come first, then the one with more margin left at its worst corner. */
+const byMerit =
+  ({ targets }: DesignDocument) =>
+  (a: Proposal, b: Proposal): number => {
+    const misses = a.shortfalls.length - b.shortfalls.length
+    return misses !== 0
+      ? misses
+      : marginSlack(b.margins.preferred.worst, targets) - marginSlack(a.margins.preferred.worst, targets)
+  }
