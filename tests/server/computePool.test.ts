@@ -60,7 +60,7 @@ describe('the compute pool', () => {
     const design = DesignDocument.parse(buckDesign({ output }))
     await expect(pool.run({ task: 'analysis', input: { design } })).rejects.toMatchObject({
       code: 'design-refused',
-      errors: [{ field: 'output.voltage' }],
+      errors: [{ field: 'design.output.voltage' }],
     })
   })
 

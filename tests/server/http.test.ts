@@ -73,8 +73,10 @@ describe('the log', () => {
         headers: { 'Content-Type': 'application/json', 'X-Request-Id': 'log-check', Authorization: 'Bearer s3cret' },
       },
     )
-    const lines = server.logLines.filter((line) => line.includes('log-check'))
-    expect(lines).toHaveLength(1)
+    const linesOf = () => server.logLines.filter((line) => line.includes('log-check'))
+    // The line is written once the answer is on its way, so it may come a moment after it.
+    await expect.poll(() => linesOf().length).toBe(1)
+    const lines = linesOf()
     expect(JSON.parse(lines[0] ?? '')).toMatchObject({
       req: { id: 'log-check', method: 'POST', url: '/api/v1/analyses' },
       res: { statusCode: 200 },
