@@ -33,6 +33,13 @@ export function fieldProblems(error: unknown): readonly FieldProblem[] {
   return problems.map(({ field, message }) => ({ field: field.replace(/^(design|requirements)\./, ''), message }))
 }
 
+/** The same by path, the first sentence of each. */
+export function problemsByPath(error: unknown): Readonly<Record<string, string>> {
+  const byPath: Record<string, string> = {}
+  for (const { field, message } of fieldProblems(error)) byPath[field] ??= message
+  return byPath
+}
+
 interface Call {
   readonly body?: unknown
   readonly signal?: AbortSignal

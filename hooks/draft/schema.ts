@@ -23,8 +23,10 @@ export const Draft = z.object({
   texts: z.record(z.string(), z.string()).default({}),
   point: PointChoice.prefault({}),
   series: SeriesChoice.prefault({}),
-  /** The network is as it was proposed; it follows when another crossover is wanted. Parts set by hand stay put. */
-  followsProposal: z.boolean().default(false),
+  /** The network is as it was proposed: it follows when another crossover is wanted. Parts set by hand stay put. */
+  isAsProposed: z.boolean().default(false),
+  /** Another crossover was asked for; the network that is proposed for it goes in when it arrives. */
+  awaitsProposal: z.boolean().default(false),
 })
 export type Draft = z.infer<typeof Draft>
 

@@ -67,17 +67,42 @@ export const draftStore = {
 
   /** One entry, as typed. */
   type(path: string, text: string): void {
-    change((draft) => withTexts(draft, draft.design, { ...draft.texts, [path]: text }))
+    change((draft) => {
+      const isPart = path.startsWith('compensator.')
+      const next = withTexts(draft, draft.design, { ...draft.texts, [path]: text })
+      return isPart ? { ...next, isAsProposed: false, awaitsProposal: false } : next
+    })
+  },
+
+  /** Another crossover is wanted, in Hz. A network that was proposed follows; one set by hand stays. */
+  wantCrossover(crossover: number): void {
+    change((draft) => ({
+      ...draft,
+      design: { ...draft.design, targets: { ...draft.design.targets, crossover } },
+      texts: without(draft.texts, (path) => path === 'targets.crossover'),
+      awaitsProposal: draft.isAsProposed,
+    }))
+  },
+
+  /** Takes a proposed network over. */
+  takeNetwork(compensator: NonNullable<DesignDocument['compensator']>): void {
+    changeWithUndo((draft) => ({
+      ...draft,
+      design: { ...draft.design, compensator },
+      texts: without(draft.texts, (path) => path.startsWith('compensator.')),
+      isAsProposed: true,
+      awaitsProposal: false,
+    }))
   },
 
   /** A change of the design that is not typed: a choice, a bank more or less, a proposal taken over. */
   edit(update: (design: DesignDocument) => DesignDocument, dropTexts: (path: string) => boolean = () => false): void {
-    changeWithUndo((draft) => {
-      const texts = Object.fromEntries(Object.entries(draft.texts).filter(([path]) => !dropTexts(path)))
-      return withTexts(draft, update(draft.design), texts)
-    })
+    changeWithUndo((draft) => withTexts(draft, update(draft.design), without(draft.texts, dropTexts)))
   },
 
+  /** An empty name is none. */
+  rename: (name: string): void =>
+    change((draft) => ({ ...draft, design: { ...draft.design, name: name === '' ? undefined : name } })),
   choosePoint: (point: PointChoice): void => change((draft) => ({ ...draft, point })),
   chooseSeries: (series: SeriesChoice): void => change((draft) => ({ ...draft, series })),
 
@@ -87,6 +112,10 @@ export const draftStore = {
     undone = undone.slice(0, -1)
     set({ kind: 'draft', draft: last })
   },
+}
+
+function without(texts: Texts, drop: (path: string) => boolean): Record<string, string> {
+  return Object.fromEntries(Object.entries(texts).filter(([path]) => !drop(path)))
 }
 
 function withTexts(draft: Draft, design: DesignDocument, texts: Texts): Draft {

@@ -17,6 +17,10 @@ export function useDraft(): Draft {
   return stored.draft
 }
 
+export function useCanUndo(): boolean {
+  return useSyncExternalStore(draftStore.subscribe, draftStore.canUndo, draftStore.canUndo)
+}
+
 /** What is wrong with the entries that are not part of the design yet, by path. */
 export function useEntryProblems(): Problems {
   const { design, texts } = useDraft()

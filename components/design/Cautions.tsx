@@ -1,0 +1,40 @@
+import { Notice } from '@/components/ui/Notice'
+import { Text } from '@/components/ui/Text'
+import type { Warning } from '@/converters/results'
+
+/** On every page of results. */
+export function Caution() {
+  return (
+    <Notice kind="note">
+      Computed from the values entered. Confirm on the bench over line, load and temperature before release.
+    </Notice>
+  )
+}
+
+/** Where line or any node can exceed 60 V DC. */
+function Hazard({ message }: { readonly message: string }) {
+  return (
+    <Notice kind="caution" title="Hazardous voltage">
+      <Text variant="small">{message}</Text>
+      <Text variant="small">
+        Mind isolation, creepage and the charge that stays in capacitors. Use injection equipment that is rated and
+        isolated for the node. Work by qualified people only, under the local electrical safety code.
+      </Text>
+    </Notice>
+  )
+}
+
+const FAULTS: readonly Warning['code'][] = ['subharmonic-oscillation', 'unstable-orbit', 'unstable-loop']
+
+/** What the computation itself points at. */
+export function Warnings({ warnings }: { readonly warnings: readonly Warning[] }) {
+  return warnings.map((warning, index) =>
+    warning.code === 'hazardous-voltage' ? (
+      <Hazard key={index} message={warning.message} />
+    ) : (
+      <Notice key={index} kind={FAULTS.includes(warning.code) ? 'fault' : 'caution'} isLive>
+        {warning.message}
+      </Notice>
+    ),
+  )
+}

@@ -1,0 +1,36 @@
+import { StyleSheet, View } from 'react-native'
+import { FrequencyRule } from '@/components/plots/FrequencyRule'
+import { space } from '@/constants/theme'
+import { draftStore } from '@/hooks/draft/store'
+import { useDraft } from '@/hooks/draft/useDraft'
+import { useDesignAnalysis } from '@/hooks/useDesignAnalysis'
+import { useLayout } from '@/hooks/useLayout'
+import { useProposals } from '@/hooks/useProposals'
+import { useTheme } from '@/hooks/useTheme'
+
+const NONE = { poles: [], zeros: [] }
+
+/** The frequency rule with what is known of the open design. */
+export function DesignRule() {
+  const theme = useTheme()
+  const { isWide } = useLayout()
+  const { design } = useDraft()
+  const { analysis } = useDesignAnalysis()
+  const { data: proposals } = useProposals()
+  const loop = design.compensator ? analysis?.loop : null
+  return (
+    <View style={[styles.frame, { borderBottomColor: theme.rule, paddingHorizontal: isWide ? space.lg : 0 }]}>
+      <FrequencyRule
+        switchingFrequency={design.switchingFrequency}
+        plant={analysis?.plant ?? NONE}
+        network={loop ? { poles: loop.compensatorPoles, zeros: loop.compensatorZeros } : NONE}
+        window={proposals?.window ?? null}
+        crossover={loop ? (analysis?.margins?.crossover ?? null) : null}
+        wanted={design.targets.crossover ?? proposals?.suggestion?.crossover ?? null}
+        onWant={draftStore.wantCrossover}
+      />
+    </View>
+  )
+}
+
+const styles = StyleSheet.create({ frame: { borderBottomWidth: 1, paddingTop: space.xs } })

@@ -1,0 +1,225 @@
+import { useState } from 'react'
+import { StyleSheet, View } from 'react-native'
+import Svg, { G, Path } from 'react-native-svg'
+import { Lines } from './PowerDrawing'
+import { Capacitor, Earth, Junction, Resistor, STROKE, Wire } from './symbols'
+import { PlotText } from '@/components/plots/PlotText'
+import type { CompensatorPart, DesignDocument } from '@/converters/document'
+import { formatEntry } from '@/hooks/draft/entries'
+import { useTheme } from '@/hooks/useTheme'
+
+const WIDTH = 330
+const HEIGHT = 262
+
+type Parts = Partial<Record<CompensatorPart, number | null>>
+
+export interface NetworkSchematicProps {
+  readonly design: DesignDocument
+}
+
+/** The error amplifier with its network, as entered. */
+export function NetworkSchematic({ design }: NetworkSchematicProps) {
+  const [width, setWidth] = useState(0)
+  const theme = useTheme()
+  const { compensator, amplifier, sense, output } = design
+  if (!compensator || amplifier.kind === 'shunt-optocoupler') return null
+  const parts: Parts = { ...compensator.parts, R1: compensator.parts.R1 ?? sense.upperResistance }
+  const lower = lowerResistance(parts.R1 ?? 0, sense.referenceVoltage, output.voltage)
+  const ink: Ink = { color: theme.ink, ground: theme.sheet, value: theme.accent }
+  const left = Math.max(0, (width - WIDTH) / 2)
+  const shared = { parts, hasLead: compensator.type === 'III', ink }
+  return (
+    <View
+      role="img"
+      aria-label={`Type ${compensator.type} network: ${listed(parts)}`}
+      style={styles.frame}
+      onLayout={(event) => setWidth(event.nativeEvent.layout.width)}
+    >
+      {width === 0 ? null : (
+        <Svg width={Math.max(WIDTH, width)} height={HEIGHT} aria-hidden>
+          <G transform={`translate(${left} 0)`}>
+            <Divider {...shared} lower={lower} />
+            <Amplifier reference={formatEntry(sense.referenceVoltage, 'V')} isCurrent={amplifier.kind === 'transconductance'} ink={ink} />
+            {amplifier.kind === 'op-amp' ? (
+              <Feedback {...shared} isTypeI={compensator.type === 'I'} />
+            ) : (
+              <Shunt {...shared} isTypeI={compensator.type === 'I'} />
+            )}
+          </G>
+        </Svg>
+      )}
+    </View>
+  )
+}
+
+/** The divider's lower resistor, R₁·V_ref/(V − V_ref); null where the output is the reference itself. */
+function lowerResistance(upper: number, reference: number, output: number): number | null {
+  return output > reference ? (upper * reference) / (output - reference) : null
+}
+
+function listed(parts: Parts): string {
+  return Object.entries(parts)
+    .filter(([, value]) => value)
+    .map(([name, value]) => `${name} ${value ? valueOf(name as CompensatorPart, value) : ''}`)
+    .join(', ')
+}
+
+function valueOf(name: CompensatorPart, value: number): string {
+  return formatEntry(value, name.startsWith('R') ? 'Ω' : 'F')
+}
+
+interface Ink {
+  readonly color: string
+  readonly ground: string
+  readonly value: string
+}
+
+interface PartProps {
+  readonly name: CompensatorPart
+  readonly parts: Parts
+  readonly x: number
+  readonly y: number
+  readonly ink: Ink
+  readonly isVertical?: boolean
+  /** Where the lettering stands. */
+  readonly side?: 'above' | 'below' | 'right'
+}
+
+/** One part with its name and value; a part that is not fitted leaves its wire open. */
+function Part({ name, parts, x, y, ink, isVertical, side = 'above' }: PartProps) {
+  const value = parts[name]
+  const Symbol = name.startsWith('R') ? Resistor : Capacitor
+  const lines = [name, value ? valueOf(name, value) : 'not fitted']
+  const at = { above: { x, y: y - 23 }, below: { x, y: y + 22 }, right: { x: x + 15, y } }[side]
+  return (
+    <G>
+      <Symbol x={x} y={y} isVertical={isVertical ?? false} color={ink.color} ground={ink.ground} />
+      <Lines {...at} lines={lines} color={ink.value} isCentred={side !== 'right'} />
+    </G>
+  )
+}
+
+interface NetworkProps {
+  readonly parts: Parts
+  readonly hasLead: boolean
+  readonly ink: Ink
+}
+
+const NODE = { x: 124, y: 158 }
+const OUT = { x: 236, y: 172 }
+
+/** From the output to the amplifier's inverting input. */
+function Divider({ parts, hasLead, lower, ink }: NetworkProps & { readonly lower: number | null }) {
+  return (
+    <G>
+      <Wire color={ink.color} d={`M8 ${NODE.y}H188`} />
+      <PlotText x={4} y={NODE.y - 8} color={ink.color}>
+        output
+      </PlotText>
+      <Part name="R1" parts={parts} x={74} y={NODE.y} ink={ink} side="below" />
+      {hasLead ? (
+        <>
+          <Wire color={ink.color} d={`M40 ${NODE.y}V92H${NODE.x}V${NODE.y}`} />
+          <Part name="R3" parts={parts} x={60} y={92} ink={ink} />
+          <Part name="C3" parts={parts} x={106} y={92} ink={ink} />
+          <Junction x={40} y={NODE.y} color={ink.color} />
+        </>
+      ) : null}
+      <Junction x={NODE.x} y={NODE.y} color={ink.color} />
+      {lower === null ? null : (
+        <>
+          <Wire color={ink.color} d={`M${NODE.x} ${NODE.y}V238`} />
+          <Resistor x={NODE.x} y={206} isVertical color={ink.color} ground={ink.ground} />
+          <PlotText x={NODE.x + 12} y={240} color={ink.color}>
+            {`lower ${formatEntry(Number(lower.toPrecision(3)), 'Ω')}`}
+          </PlotText>
+          <Earth x={NODE.x} y={238} color={ink.color} />
+        </>
+      )}
+    </G>
+  )
+}
+
+function Amplifier({ reference, isCurrent, ink }: { readonly reference: string; readonly isCurrent: boolean; readonly ink: Ink }) {
+  return (
+    <G>
+      <Path d={`M188 146V198L${OUT.x} ${OUT.y}z`} stroke={ink.color} strokeWidth={STROKE} fill={ink.ground} />
+      <PlotText x={192} y={163} color={ink.color}>
+        −
+      </PlotText>
+      <PlotText x={192} y={191} color={ink.color}>
+        +
+      </PlotText>
+      {isCurrent ? (
+        <PlotText x={203} y={177} color={ink.color}>
+          gm
+        </PlotText>
+      ) : null}
+      <Wire color={ink.color} d="M188 186H172V212" />
+      <PlotText x={160} y={226} color={ink.value} isStrong>
+        {reference}
+      </PlotText>
+    </G>
+  )
+}
+
+/** Op-amp: from the amplifier's output back to its inverting input. */
+function Feedback({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: boolean }) {
+  const right = 296
+  const left = 150
+  return (
+    <G>
+      <Wire color={ink.color} d={`M${OUT.x} ${OUT.y}H${right + 14}`} />
+      <PlotText x={326} y={OUT.y + 20} color={ink.color} anchor="end">
+        control
+      </PlotText>
+      <Wire color={ink.color} d={`M${left} ${NODE.y}V106H${right}V${OUT.y}`} />
+      <Junction x={left} y={NODE.y} color={ink.color} />
+      <Junction x={right} y={OUT.y} color={ink.color} />
+      {isTypeI ? (
+        <Part name="C1" parts={parts} x={223} y={106} ink={ink} />
+      ) : (
+        <>
+          <Part name="R2" parts={parts} x={190} y={106} ink={ink} />
+          <Part name="C1" parts={parts} x={256} y={106} ink={ink} />
+          <Wire color={ink.color} d={`M${left} 106V44H${right}V106`} isDashed={!parts.C2} />
+          <Part name="C2" parts={parts} x={223} y={44} ink={ink} />
+          <Junction x={left} y={106} color={ink.color} />
+          <Junction x={right} y={106} color={ink.color} />
+        </>
+      )}
+    </G>
+  )
+}
+
+/** Transconductance amplifier: from its output to ground. */
+function Shunt({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: boolean }) {
+  const first = 252
+  const top = 40
+  return (
+    <G>
+      <Wire color={ink.color} d={`M${OUT.x} ${OUT.y}V${top}H324`} />
+      <PlotText x={326} y={top - 8} color={ink.color} anchor="end">
+        control
+      </PlotText>
+      <Wire color={ink.color} d={`M${first} ${top}V232`} />
+      <Junction x={first} y={top} color={ink.color} />
+      <Earth x={first} y={232} color={ink.color} />
+      {isTypeI ? (
+        <Part name="C1" parts={parts} x={first} y={120} ink={ink} isVertical side="right" />
+      ) : (
+        <>
+          <Part name="R2" parts={parts} x={first} y={96} ink={ink} isVertical side="right" />
+          <Part name="C1" parts={parts} x={first} y={196} ink={ink} isVertical side="right" />
+          <Wire color={ink.color} d={`M310 ${top}V150`} isDashed={!parts.C2} />
+          <Junction x={310} y={top} color={ink.color} />
+          <Capacitor x={310} y={112} isVertical color={ink.color} ground={ink.ground} />
+          <Earth x={310} y={150} color={ink.color} />
+          <Lines x={310} y={182} lines={['C2', parts.C2 ? valueOf('C2', parts.C2) : 'not fitted']} color={ink.value} isCentred />
+        </>
+      )}
+    </G>
+  )
+}
+
+const styles = StyleSheet.create({ frame: { minHeight: HEIGHT, overflow: 'hidden' } })
