@@ -1,0 +1,16 @@
+/** Measures what the product promises about speed and size: npm run bench. Fails when a goal is missed. */
+import { measureBundle } from '@/scripts/bench/bundle'
+import { measureEngine } from '@/scripts/bench/engine'
+import { printTable } from '@/scripts/bench/line'
+import { measureLoad } from '@/scripts/bench/load'
+import { startProduct } from '@/scripts/bench/product'
+
+const engine = await measureEngine()
+const bundle = await measureBundle()
+const product = await startProduct()
+try {
+  const load = await measureLoad(product, engine[0]?.measured ?? NaN)
+  if (!printTable([...engine, ...load, ...bundle])) process.exitCode = 1
+} finally {
+  await product.stop()
+}
