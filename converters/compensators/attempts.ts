@@ -6,7 +6,7 @@ import type { CompensatorType } from '../document'
 import { modulus } from '../numeric/complex'
 import type { Proposal } from '../results'
 import { plantPhase, type CornerPlants } from './cornerPlants'
-import { kFactorNetwork, LARGEST_BOOST } from './kFactor'
+import { kFactorNetwork } from './kFactor'
 import type { Synthesis, SynthesisedNetwork } from './placement'
 import { quickMargins, type QuickMargins } from './quickMargins'
 
@@ -27,7 +27,6 @@ export interface Goal {
 export interface Attempt extends QuickMargins {
   readonly method: Proposal['method']
   readonly goal: Goal
-  readonly boostDeg: number // asked of the network
   readonly ideal: SynthesisedNetwork
 }
 
@@ -54,32 +53,32 @@ export interface AttemptRequest {
 
 /** The best K-factor network at one crossover, or null if the boost cannot be had. */
 export function attemptKFactor({ plants, upperResistance, goal, type }: AttemptRequest): Attempt | null {
-  return withReserve(plants, goal, 'k-factor', (boostDeg) => {
-    const chosen = type ?? typeFor(boostDeg)
-    if (chosen === null || (chosen !== 'I' && boostDeg >= LARGEST_BOOST[chosen])) return null
-    const { omega, gain } = goal
-    const asked = { omega, gain, boostDeg: Math.max(boostDeg, LEAST_BOOST) }
-    return kFactorNetwork(plants.design, upperResistance, chosen, asked)
-  })
+  const { targets } = plants.design
+  const boosts = RESERVES.map((reserve) => boostFor(goal, targets.phaseMargin + reserve))
+  return bestAttempt(
+    boosts.map((boostDeg) => () => {
+      const chosen = type ?? typeFor(boostDeg)
+      if (chosen === null) return null
+      const asked = { omega: goal.omega, gain: goal.gain, boostDeg: Math.max(boostDeg, LEAST_BOOST) }
+      return tried(plants, goal, 'k-factor', kFactorNetwork(plants.design, upperResistance, chosen, asked))
+    }),
+  )
 }
 
-/** Asks for more phase step by step; the first network that holds at every corner, else the one that comes nearest. */
-export function withReserve(
-  plants: CornerPlants,
-  goal: Goal,
-  method: Proposal['method'],
-  make: (boostDeg: number) => Synthesis | null,
-): Attempt | null {
-  const { targets } = plants.design
+/** A network with its margins at the corners; null if there is none. */
+export function tried(plants: CornerPlants, goal: Goal, method: Proposal['method'], ideal: Synthesis): Attempt | null {
+  if (ideal.kind === 'problem') return null
+  return { method, goal, ideal, ...quickMargins(plants, ideal.network, plants.design.targets) }
+}
+
+/** The first that holds at every corner, else the one that comes nearest; null when none can be made. */
+export function bestAttempt(makers: readonly (() => Attempt | null)[]): Attempt | null {
   let best: Attempt | null = null
-  for (const reserve of RESERVES) {
-    const boostDeg = boostFor(goal, targets.phaseMargin + reserve)
-    const ideal = make(boostDeg)
-    if (ideal?.kind !== 'network') break
-    const attempt = { method, goal, boostDeg, ideal, ...quickMargins(plants, ideal.network, targets) }
+  for (const make of makers) {
+    const attempt = make()
+    if (attempt === null) continue
     if (best === null || attempt.slack > best.slack) best = attempt
-    // Type I has one shape: asking for more phase does not change it.
-    if (attempt.slack >= 0 || ideal.type === 'I') break
+    if (best.slack >= 0) break
   }
   return best
 }

@@ -2,9 +2,12 @@
 import type { CompensatorType } from '../document'
 import { formatQuantity } from '../quantities'
 import type { CrossoverWindow } from '../results'
-import { attemptKFactor, boostFor, goalAt, typeFor, type Attempt } from './attempts'
+import { attemptKFactor, boostFor, goalAt, typeFor, type Attempt, type Goal } from './attempts'
 import type { CornerPlants } from './cornerPlants'
 import { LARGEST_BOOST } from './kFactor'
+import type { CompensatorOptions } from './options'
+import { attemptPlaced } from './placed'
+import { isBuildable } from './sizing'
 import { rightHalfPlaneZero } from '../plant'
 
 export interface ChoiceRequest {
@@ -13,12 +16,16 @@ export interface ChoiceRequest {
   readonly upperResistance: number // Ω
   readonly wanted: number | null // Hz
   readonly type: CompensatorType | null
+  readonly limits: CompensatorOptions['limits']
+  /** Brings an attempt's parts within the limits where R1 may be moved. */
+  readonly size: (attempt: Attempt) => Attempt
 }
 
 export type Choice =
   | {
       readonly kind: 'choice'
-      readonly attempt: Attempt
+      /** The first is what the choice was made for; one at another crossover is an alternative. */
+      readonly attempts: readonly [Attempt, ...Attempt[]]
       readonly how: 'wanted' | 'highest' | 'nearest' | 'slow-integrator'
     }
   | { readonly kind: 'refusal'; readonly message: string }
@@ -29,7 +36,7 @@ const STEPS_PER_DECADE = 24
 const SEARCHED_DECADES = 1.3
 const SLOW_DECADES = 3
 /** With this share of the targets still held, a crossover in the window is better than a slow integrator. */
-const TOLERABLE_SLACK = -0.25
+const TOLERABLE_SLACK = -0.4
 
 const refusal = (message: string): Choice => ({ kind: 'refusal', message })
 const hertz = (frequency: number) => formatQuantity(frequency, 'Hz')
@@ -55,8 +62,8 @@ function takeWanted(request: ChoiceRequest, wanted: number): Choice {
   const goal = goalAt(plants, TAU * wanted)
   const boost = boostFor(goal, targets.phaseMargin)
   const limit = type === null ? LARGEST_BOOST.III : LARGEST_BOOST[type]
-  const attempt = attemptKFactor({ ...request, goal })
-  if (attempt) return { kind: 'choice', attempt, how: 'wanted' }
+  const attempts = bothMethods(request, goal)
+  if (attempts) return { kind: 'choice', attempts, how: 'wanted' }
   const lag = (-goal.plantPhase).toFixed(0)
   const adds =
     type === null ? 'type III, the largest network, adds less than 180°' : `type ${type} adds less than ${limit}°`
@@ -72,41 +79,61 @@ function takeWanted(request: ChoiceRequest, wanted: number): Choice {
 function search(request: ChoiceRequest): Choice {
   const { plants, window, type } = request
   const inWindow = window.lower < window.upper ? bestBetween(request, window.lower, window.upper) : null
-  if (inWindow && inWindow.holds) return { kind: 'choice', attempt: inWindow.attempt, how: 'highest' }
+  const slack = inWindow ? inWindow[0].slack : -Infinity
+  if (inWindow && slack >= 0) return { kind: 'choice', attempts: inWindow, how: 'highest' }
   const slow = type === null || type === 'I' ? slowIntegrator(request) : null
-  if (slow && !(inWindow && inWindow.attempt.slack >= TOLERABLE_SLACK)) {
-    return { kind: 'choice', attempt: slow, how: 'slow-integrator' }
+  if (slow && slack < TOLERABLE_SLACK) return { kind: 'choice', attempts: [slow], how: 'slow-integrator' }
+  if (inWindow && slack > -1) {
+    // The slow loop that holds is shown too: it may be what the designer can live with.
+    return { kind: 'choice', attempts: slow ? [...inWindow, slow] : inWindow, how: 'nearest' }
   }
-  if (inWindow && inWindow.attempt.slack > -1) return { kind: 'choice', attempt: inWindow.attempt, how: 'nearest' }
   const { phaseMargin, gainMargin } = plants.design.targets
   const which = type === null ? 'No network of type I, II or III' : `No network of type ${type}`
   const bounds =
     window.lower < window.upper ? '' : ` The window is empty: ${window.bounds.map(({ text }) => text).join(' ')}`
   return refusal(
-    `${which} keeps ${phaseMargin}° and ${gainMargin} dB, or comes near, at every corner of line and load.${bounds}`,
+    `${which} that can be built keeps ${phaseMargin}° and ${gainMargin} dB, or comes near, at every corner of line and load.${bounds}`,
   )
 }
 
+/** Both methods at one crossover, the better first: a K-factor network that holds, or the one with more slack. */
+function bothMethods(request: ChoiceRequest, goal: Goal): [Attempt, ...Attempt[]] | null {
+  const { plants, upperResistance, type, size } = request
+  const found = attemptKFactor({ plants, upperResistance, goal, type })
+  if (!found) return null
+  const byFactor = size(found)
+  const foundPlaced = attemptPlaced({ plants, upperResistance, goal, type: byFactor.ideal.type })
+  if (!foundPlaced) return [byFactor]
+  const placed = size(foundPlaced)
+  return byFactor.slack >= Math.min(placed.slack, 0) ? [byFactor, placed] : [placed, byFactor]
+}
+
 /** From the top of the window down: the first crossover at which all corners hold and stay inside, else the nearest. */
-function bestBetween(request: ChoiceRequest, lower: number, upper: number) {
-  const { plants } = request
-  let nearest: Attempt | null = null
+function bestBetween(request: ChoiceRequest, lower: number, upper: number): [Attempt, ...Attempt[]] | null {
+  const { plants, limits } = request
+  let nearest: [Attempt, ...Attempt[]] | null = null
   for (const frequency of descending(upper, Math.max(lower, upper / 10 ** SEARCHED_DECADES))) {
-    const attempt = attemptKFactor({ ...request, goal: goalAt(plants, TAU * frequency) })
-    if (!attempt || attempt.highestCrossover > TAU * upper) continue
-    if (attempt.slack >= 0) return { attempt, holds: true }
-    if (nearest === null || attempt.slack > nearest.slack) nearest = attempt
+    const attempts = bothMethods(request, goalAt(plants, TAU * frequency))
+    if (!attempts) continue
+    const [best, ...others] = attempts.filter(
+      ({ ideal, highestCrossover }) => highestCrossover <= TAU * upper && isBuildable(ideal.parts, limits),
+    )
+    if (!best) continue
+    if (nearest === null || best.slack > nearest[0].slack) nearest = [best, ...others]
+    if (best.slack >= 0) break
   }
-  return nearest && { attempt: nearest, holds: false }
+  return nearest
 }
 
 /** An integrator so slow that even the resonance's peak stays below the gain margin. */
 function slowIntegrator(request: ChoiceRequest): Attempt | null {
-  const { plants, window } = request
+  const { plants, window, limits, size } = request
   const top = Math.min(window.lower || window.upper, window.upper)
   for (const frequency of descending(top, top / 10 ** SLOW_DECADES)) {
-    const attempt = attemptKFactor({ ...request, type: 'I', goal: goalAt(plants, TAU * frequency) })
-    if (attempt && attempt.slack >= 0) return attempt
+    const found = attemptKFactor({ ...request, type: 'I', goal: goalAt(plants, TAU * frequency) })
+    if (!found || found.slack < 0) continue
+    const attempt = size(found)
+    if (isBuildable(attempt.ideal.parts, limits)) return attempt
   }
   return null
 }

@@ -13,10 +13,10 @@ import { readCorners, summariseCorners } from './cornerMargins'
 import { openCorners, type CornerPlants } from './cornerPlants'
 import { buildNetwork, networkRoots } from './networks'
 import { CompensatorOptions, type CompensatorOptionsInput } from './options'
-import { attemptPlaced } from './placed'
 import { pairRoots, placeNetwork } from './placement'
 import { marginSlack, quickMargins } from './quickMargins'
 import { networkReasons, shortfalls, suggestionReasons } from './sentences'
+import { sizeAttempt } from './sizing'
 import { snapNetwork, stockOf, type Stock } from './snapping'
 import { crossoverWindow } from './window'
 
@@ -37,16 +37,19 @@ export function proposeCompensator(design: unknown, options: CompensatorOptionsI
   const unstable = unstableOrbit(plants)
   if (unstable !== null) return refused(unstable)
 
-  const upperResistance = document.compensator?.parts.R1 || document.sense.upperResistance
+  const fixedUpper = document.compensator?.parts.R1
+  const upperResistance = fixedUpper || document.sense.upperResistance
+  const { limits } = checked
+  const mayMove = !fixedUpper && document.amplifier.kind === 'op-amp'
+  const size = (attempt: Attempt) => (mayMove ? sizeAttempt(plants, attempt, limits, stock.resistors) : attempt)
   const wanted = checked.crossover ?? document.targets.crossover
   const type = checked.type ?? null
-  const choice = chooseCrossover({ plants, window, upperResistance, wanted, type })
+  const choice = chooseCrossover({ plants, window, upperResistance, wanted, type, limits, size })
   if (choice.kind === 'refusal') return refused(choice.message)
-  const { goal, ideal } = choice.attempt
-  const request = { plants, upperResistance, goal, type: ideal.type }
+  const { goal, ideal } = choice.attempts[0]
   const attempts = checked.placement
-    ? [attemptByHand(request, checked.placement)]
-    : [choice.attempt, attemptPlaced(request)].filter((attempt) => attempt !== null)
+    ? [size(attemptByHand({ plants, upperResistance, goal }, checked.placement))]
+    : choice.attempts
   const evaluated = attempts.map((attempt) =>
     evaluate(plants, attempt, { stock, options: checked, window, byHand: checked.placement !== undefined }),
   )
@@ -58,7 +61,7 @@ export function proposeCompensator(design: unknown, options: CompensatorOptionsI
       phaseBoost: boostFor(goal, document.targets.phaseMargin),
       reasons: suggestionReasons(plants, window, choice, type !== null),
     },
-    proposals: evaluated.sort(byMerit(document)),
+    proposals: evaluated.sort(byMerit(document, goal.omega / (2 * Math.PI))),
     refusal: null,
   }
 }
@@ -89,15 +92,13 @@ function unstableOrbit({ corners }: CornerPlants): string | null {
 
 /** @throws DesignError at the placement when its zeros and poles make no network. */
 function attemptByHand(
-  { plants, upperResistance, goal }: AttemptRequest,
+  { plants, upperResistance, goal }: Omit<AttemptRequest, 'type'>,
   { zeros, poles }: NonNullable<CompensatorOptions['placement']>,
 ): Attempt {
   const placement = pairRoots(zeros, poles)
   const ideal = 'kind' in placement ? placement : placeNetwork(plants.design, upperResistance, placement, goal)
   if (ideal.kind === 'problem') throw invalid([{ field: 'options.placement', message: ideal.message }])
-  const { targets } = plants.design
-  const boostDeg = boostFor(goal, targets.phaseMargin)
-  return { method: 'placed', goal, boostDeg, ideal, ...quickMargins(plants, ideal.network, targets) }
+  return { method: 'placed', goal, ideal, ...quickMargins(plants, ideal.network, plants.design.targets) }
 }
 
 interface Evaluation {
@@ -125,17 +126,16 @@ function evaluate(plants: CornerPlants, attempt: Attempt, { stock, options, wind
     poles: roots.compensatorPoles,
     zeros: roots.compensatorZeros,
     margins,
-    reasons: networkReasons(plants, { attempt, preferred: parts, margins, options, byHand }),
-    shortfalls: shortfalls(plants, window, read, { attempt, preferred: parts, options }),
+    reasons: networkReasons(plants, { attempt, margins, options, byHand }),
+    shortfalls: shortfalls(plants, window, read, { ideal: ideal.parts, preferred: parts, options }),
   }
 }
 
-/** Those that hold come first, then the one with more margin left at its worst corner. */
+/** At the suggested crossover first; there those that hold, then the one with more margin at its worst corner. */
 const byMerit =
-  ({ targets }: DesignDocument) =>
+  ({ targets }: DesignDocument, suggested: number) =>
   (a: Proposal, b: Proposal): number => {
-    const misses = a.shortfalls.length - b.shortfalls.length
-    return misses !== 0
-      ? misses
-      : marginSlack(b.margins.preferred.worst, targets) - marginSlack(a.margins.preferred.worst, targets)
+    const elsewhere = (proposal: Proposal) => Number(proposal.crossover !== suggested)
+    const slack = (proposal: Proposal) => marginSlack(proposal.margins.preferred.worst, targets)
+    return elsewhere(a) - elsewhere(b) || a.shortfalls.length - b.shortfalls.length || slack(b) - slack(a)
   }

@@ -5,7 +5,7 @@ import { boostFor, type Attempt } from './attempts'
 import type { Choice } from './chooseCrossover'
 import type { ReadCorner } from './cornerMargins'
 import type { CornerPlants } from './cornerPlants'
-import { kFactor } from './kFactor'
+import { boostOf, kFactor } from './kFactor'
 import type { CompensatorOptions } from './options'
 
 const TAU = 2 * Math.PI
@@ -19,7 +19,7 @@ const at = ({ lineVoltage, outputCurrent }: { lineVoltage: number; outputCurrent
 export function suggestionReasons(
   plants: CornerPlants,
   window: CrossoverWindow,
-  { attempt, how }: Extract<Choice, { kind: 'choice' }>,
+  { attempts: [attempt], how }: Extract<Choice, { kind: 'choice' }>,
   typeForced: boolean,
 ): string[] {
   const { targets } = plants.design
@@ -58,7 +58,6 @@ function typeReason(
 
 export interface NetworkFacts {
   readonly attempt: Attempt
-  readonly preferred: PartValues
   readonly margins: { readonly ideal: CornerMargins; readonly preferred: CornerMargins }
   readonly options: CompensatorOptions
   /** Zeros and poles came by hand. */
@@ -66,27 +65,42 @@ export interface NetworkFacts {
 }
 
 export function networkReasons(plants: CornerPlants, facts: NetworkFacts): string[] {
-  const { attempt, margins } = facts
-  const { targets } = plants.design
-  const reserve = attempt.boostDeg - boostFor(attempt.goal, targets.phaseMargin)
-  const asked =
-    facts.byHand || attempt.ideal.type === 'I'
-      ? []
-      : [
-          `The network is made for ${degrees(targets.phaseMargin + reserve)} at nominal line and full load: ${degrees(reserve)} beyond the target, for the other corners and for rounding.`,
-        ]
-  return [methodReason(facts), ...asked, roundingReason(facts), worstReason(margins.preferred)]
+  return [
+    methodReason(facts),
+    ...reserveReason(plants, facts),
+    ...movedUpperReason(plants, facts),
+    roundingReason(facts),
+    worstReason(facts.margins.preferred),
+  ]
 }
 
-function methodReason({ attempt, byHand }: NetworkFacts): string {
-  const { method, ideal, boostDeg, goal } = attempt
+function methodReason({ attempt: { method, ideal, goal }, byHand }: NetworkFacts): string {
+  const { type, network } = ideal
   if (byHand) return 'Zeros and poles stand where they were placed by hand.'
-  if (ideal.type === 'I') return `C1 alone makes an integrator that crosses at ${hertz(goal.omega / TAU)}.`
+  if (type === 'I') return `C1 alone makes an integrator that crosses at ${hertz(goal.omega / TAU)}, before the plant’s own phase counts; what the loop corrects, it corrects slowly.`
   if (method === 'k-factor') {
-    const K = kFactor(ideal.type, boostDeg).toPrecision(3)
-    return `K = ${K} for ${degrees(boostDeg)}: zeros and poles stand around the crossover so that the boost peaks there (Venable 1983).`
+    const boost = boostOf(network, goal.omega)
+    return `Zeros and poles stand around the crossover so that their boost of ${degrees(boost)} peaks there, K = ${kFactor(type, boost).toPrecision(3)} (Venable 1983).`
   }
-  return 'Zeros stand at the plant’s own poles, or as far below as the phase asks for; poles at its ESR zero, its right-half-plane zero or half the switching frequency (common practice, no source).'
+  return 'Zeros stand at the plant’s own poles, or as far below as the corners ask for; poles at its ESR zero, its right-half-plane zero or half the switching frequency (common practice, no source).'
+}
+
+/** Why the nominal margin is wider than the target. */
+function reserveReason({ design: { targets } }: CornerPlants, { attempt, margins, byHand }: NetworkFacts): string[] {
+  const { phaseMargin } = margins.ideal.nominal
+  if (byHand || attempt.ideal.type === 'I' || phaseMargin === null || phaseMargin < targets.phaseMargin + 1) return []
+  return [
+    `At nominal line and full load it is made for ${degrees(phaseMargin)}, ${degrees(phaseMargin - targets.phaseMargin)} beyond the target: a reserve for the other corners and for rounding.`,
+  ]
+}
+
+function movedUpperReason({ design: { compensator, sense } }: CornerPlants, { attempt }: NetworkFacts): string[] {
+  const before = compensator?.parts.R1 || sense.upperResistance
+  const after = attempt.ideal.parts.R1!
+  if (after === before) return []
+  return [
+    `R1 goes from ${formatQuantity(before, 'Ω')} to ${formatQuantity(after, 'Ω')}, and the lower divider resistor with it, so that all parts stay within the size limits.`,
+  ]
 }
 
 function roundingReason({ margins, options }: NetworkFacts): string {
@@ -118,7 +132,7 @@ export function shortfalls(
   plants: CornerPlants,
   window: CrossoverWindow,
   read: readonly ReadCorner[],
-  { attempt, preferred, options }: Pick<NetworkFacts, 'attempt' | 'preferred' | 'options'>,
+  { ideal, preferred, options }: { ideal: PartValues; preferred: PartValues; options: CompensatorOptions },
 ): string[] {
   const unstable = read.filter((corner) => !corner.isStable)
   if (unstable.length > 0) return [`The loop is unstable at ${unstable.map(at).join(', ')}.`]
@@ -127,7 +141,7 @@ export function shortfalls(
     short(read, (corner) => corner.phaseMargin, targets.phaseMargin, 'phase margin', degrees),
     short(read, (corner) => corner.gainMargin, targets.gainMargin, 'gain margin', decibels),
     aboveWindow(read, window),
-    ...limitedParts(attempt.ideal.parts, preferred, options),
+    ...limitedParts(ideal, preferred, options),
   ].filter((sentence) => sentence !== null)
 }
 
