@@ -77,7 +77,8 @@ export function networkReasons(plants: CornerPlants, facts: NetworkFacts): strin
 function methodReason({ attempt: { method, ideal, goal }, byHand }: NetworkFacts): string {
   const { type, network } = ideal
   if (byHand) return 'Zeros and poles stand where they were placed by hand.'
-  if (type === 'I') return `C1 alone makes an integrator that crosses at ${hertz(goal.omega / TAU)}, before the plant’s own phase counts; what the loop corrects, it corrects slowly.`
+  if (type === 'I')
+    return `C1 alone makes an integrator that crosses at ${hertz(goal.omega / TAU)}, before the plant’s own phase counts; what the loop corrects, it corrects slowly.`
   if (method === 'k-factor') {
     const boost = boostOf(network, goal.omega)
     return `Zeros and poles stand around the crossover so that their boost of ${degrees(boost)} peaks there, K = ${kFactor(type, boost).toPrecision(3)} (Venable 1983).`
