@@ -3,7 +3,11 @@ const LONGEST_LINK = 100_000 // characters
 const LARGEST_TEXT = 256_000 // bytes, as much as the API takes
 
 export async function encodeText(text: string): Promise<string> {
-  const bytes = await pipe(new TextEncoder().encode(text), new CompressionStream('deflate-raw'), Number.POSITIVE_INFINITY)
+  const bytes = await pipe(
+    new TextEncoder().encode(text),
+    new CompressionStream('deflate-raw'),
+    Number.POSITIVE_INFINITY,
+  )
   const binary = Array.from(bytes, (byte) => String.fromCharCode(byte)).join('')
   return btoa(binary).replaceAll('+', '-').replaceAll('/', '_').replaceAll('=', '')
 }

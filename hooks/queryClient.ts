@@ -6,7 +6,9 @@ const MOST_TRIES = 3
 /** Only what may pass by itself is tried again: a busy server, a lost connection. */
 function mayPass(error: Error): boolean {
   if (!(error instanceof ApiError)) return false
-  return error.failure.kind === 'unreachable' || (error.failure.kind === 'problem' && error.failure.problem.status === 503)
+  return (
+    error.failure.kind === 'unreachable' || (error.failure.kind === 'problem' && error.failure.problem.status === 503)
+  )
 }
 
 function waitBefore(attempt: number, error: Error): number {
@@ -27,7 +29,11 @@ export function createQueryClient(): QueryClient {
         retry: (count, error) => count < MOST_TRIES - 1 && mayPass(error),
         retryDelay: waitBefore,
       },
-      mutations: { networkMode: 'always', retry: (count, error) => count < 1 && mayPass(error), retryDelay: waitBefore },
+      mutations: {
+        networkMode: 'always',
+        retry: (count, error) => count < 1 && mayPass(error),
+        retryDelay: waitBefore,
+      },
     },
   })
 }

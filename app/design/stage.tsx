@@ -68,7 +68,10 @@ export default function StageScreen() {
           <>
             <EntryNotice />
             {error ? <Fault error={error} isStale={isStale} onRetry={retry} /> : null}
-            <Card title="Power stage" action={<LinkButton kind="quiet" icon="arrow" label="See the plant" href="/design/plant" />}>
+            <Card
+              title="Power stage"
+              action={<LinkButton kind="quiet" icon="arrow" label="See the plant" href="/design/plant" />}
+            >
               <StageSchematic design={design} onPart={setPart} />
               <Text variant="small" tone="quiet">
                 Press a part to change it. Values are taken as you write them: 4.7u, 22 µF, 2k2, 0R01, 1,5 m.

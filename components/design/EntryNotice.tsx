@@ -8,7 +8,11 @@ export function EntryNotice() {
   if (paths.length === 0) return null
   const names = [...new Set(paths.map((path) => (isEntry(path) ? fieldSpec(path).label : path)))]
   return (
-    <Notice kind="caution" isLive title={names.length === 1 ? 'One entry is not used yet' : 'Some entries are not used yet'}>
+    <Notice
+      kind="caution"
+      isLive
+      title={names.length === 1 ? 'One entry is not used yet' : 'Some entries are not used yet'}
+    >
       {`${names.join(', ')}: see the reason beside the entry. The figures are for the values before.`}
     </Notice>
   )

@@ -35,7 +35,9 @@ export function Fault({ error, onRetry, isStale }: FaultProps) {
           </View>
         ))}
       </View>
-      {isStale ? <Text variant="small">The figures below are those of the last design that could be computed.</Text> : null}
+      {isStale ? (
+        <Text variant="small">The figures below are those of the last design that could be computed.</Text>
+      ) : null}
     </ErrorState>
   )
 }

@@ -17,7 +17,11 @@ export function OperatingFigures({ point }: { readonly point: OperatingPoint }) 
         note={boundaryCurrent === null ? 'synchronous rectifier' : `boundary at ${figure(boundaryCurrent, 'A')}`}
       />
       <Figure label="Inductor ripple" value={figure(inductorCurrent.ripple, 'A')} note="peak to peak" />
-      <Figure label="Inductor peak" value={figure(inductorCurrent.peak, 'A')} note={`valley ${figure(inductorCurrent.valley, 'A')}`} />
+      <Figure
+        label="Inductor peak"
+        value={figure(inductorCurrent.peak, 'A')}
+        note={`valley ${figure(inductorCurrent.valley, 'A')}`}
+      />
       <Figure label="Output ripple" value={figure(point.outputRipple, 'V')} note="peak to peak" />
       <Figure
         label="Efficiency"

@@ -19,10 +19,7 @@ export function TabLinks({ isRail }: { readonly isRail: boolean }) {
     <View
       role="navigation"
       aria-label="Screens of the design"
-      style={[
-        isRail ? styles.rail : styles.foot,
-        { backgroundColor: theme.sheet, borderColor: theme.rule },
-      ]}
+      style={[isRail ? styles.rail : styles.foot, { backgroundColor: theme.sheet, borderColor: theme.rule }]}
     >
       {TABS.map(({ name, href, icon }) => {
         const isHere = pathname === href
@@ -36,7 +33,8 @@ export function TabLinks({ isRail }: { readonly isRail: boolean }) {
               {...current}
               style={StyleSheet.flatten([
                 styles.tab,
-                isRail ? [styles.railTab, { borderLeftColor: mark }] : [styles.footTab, { borderTopColor: mark }],
+                isRail ? styles.railTab : styles.footTab,
+                isRail ? { borderLeftColor: mark } : { borderTopColor: mark },
               ])}
             >
               <Icon name={icon} color={color} />

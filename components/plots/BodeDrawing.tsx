@@ -1,7 +1,6 @@
 import Svg, { Circle, ClipPath, Defs, G, Line, Path, Rect } from 'react-native-svg'
 import {
   bandPath,
-
   BOTTOM,
   curvePath,
   labelPlace,
@@ -29,7 +28,16 @@ interface BodeDrawingProps extends BodePlotProps {
 }
 
 export function BodeDrawing(props: BodeDrawingProps) {
-  const { frequencies, curves, band = null, gainScale = 'dB', crossover = null, switchingFrequency, width, height } = props
+  const {
+    frequencies,
+    curves,
+    band = null,
+    gainScale = 'dB',
+    crossover = null,
+    switchingFrequency,
+    width,
+    height,
+  } = props
   const theme = useTheme()
   const x = xScaleOf(frequencies, width)
   // The axis of a loop's phase always shows −180°, from which the margin is read.
@@ -44,7 +52,12 @@ export function BodeDrawing(props: BodeDrawingProps) {
           <PanelTitle panel={panel} title={panel.quantity === 'gainDb' ? props.gainTitle : 'Phase, degrees'} />
           <Defs>
             <ClipPath id={`${props.fileName}-${panel.quantity}`}>
-              <Rect x={LEFT} y={panel.top} width={Math.max(0, width - LEFT - RIGHT)} height={panel.bottom - panel.top} />
+              <Rect
+                x={LEFT}
+                y={panel.top}
+                width={Math.max(0, width - LEFT - RIGHT)}
+                height={panel.bottom - panel.top}
+              />
             </ClipPath>
           </Defs>
           <G clipPath={`url(#${props.fileName}-${panel.quantity})`}>
@@ -107,7 +120,13 @@ function Grid({ panel, x, theme, gainScale }: PanelProps & { readonly gainScale:
     gainScale === 'Ω' && panel.quantity === 'gainDb' ? ohmLabel(value) : String(value).replace('-', '−')
   return (
     <G>
-      <Rect x={left} y={panel.top} width={Math.max(0, right - left)} height={panel.bottom - panel.top} fill={theme.sheet} />
+      <Rect
+        x={left}
+        y={panel.top}
+        width={Math.max(0, right - left)}
+        height={panel.bottom - panel.top}
+        fill={theme.sheet}
+      />
       {decadeSubdivisions(low, high).map((value) => (
         <Line
           key={`s${value}`}
@@ -120,7 +139,15 @@ function Grid({ panel, x, theme, gainScale }: PanelProps & { readonly gainScale:
         />
       ))}
       {decadeTicks(low, high).map(({ value }) => (
-        <Line key={value} x1={x(value)} x2={x(value)} y1={panel.top} y2={panel.bottom} stroke={theme.rule} strokeWidth={1.2} />
+        <Line
+          key={value}
+          x1={x(value)}
+          x2={x(value)}
+          y1={panel.top}
+          y2={panel.bottom}
+          stroke={theme.rule}
+          strokeWidth={1.2}
+        />
       ))}
       {panel.axis.ticks.map((value) => (
         <G key={value}>
@@ -222,7 +249,14 @@ function CrossoverMarks({ crossover, curves, frequencies, panels, x, theme, widt
       {reading ? (
         <>
           <Line x1={at} x2={at} y1={yPhase(reading.phaseDeg)} y2={yPhase(-180)} stroke={theme.accent} strokeWidth={3} />
-          <Circle cx={at} cy={yPhase(reading.phaseDeg)} r={4.5} stroke={theme.accent} strokeWidth={2} fill={theme.sheet} />
+          <Circle
+            cx={at}
+            cy={yPhase(reading.phaseDeg)}
+            r={4.5}
+            stroke={theme.accent}
+            strokeWidth={2}
+            fill={theme.sheet}
+          />
           <PlotText
             x={isLeft ? at - 8 : at + 8}
             y={middle + 5}
@@ -251,7 +285,13 @@ function FrequencyAxis({ x, height, width, theme }: FrequencyAxisProps) {
   return (
     <G>
       {decadeTicks(low, high).map(({ value, label }) => (
-        <PlotText key={value} x={Math.min(x(value), width - 14)} y={height - BOTTOM + 16} color={theme.quiet} anchor="middle">
+        <PlotText
+          key={value}
+          x={Math.min(x(value), width - 14)}
+          y={height - BOTTOM + 16}
+          color={theme.quiet}
+          anchor="middle"
+        >
           {label}
         </PlotText>
       ))}
@@ -261,4 +301,3 @@ function FrequencyAxis({ x, height, width, theme }: FrequencyAxisProps) {
     </G>
   )
 }
-

@@ -202,7 +202,11 @@ interface MarkProps {
 }
 
 function Mark({ kind, x, y, color, ground }: MarkProps) {
-  return kind === 'pole' ? <PoleMark x={x} y={y} color={color} /> : <ZeroMark x={x} y={y} color={color} ground={ground} />
+  return kind === 'pole' ? (
+    <PoleMark x={x} y={y} color={color} />
+  ) : (
+    <ZeroMark x={x} y={y} color={color} ground={ground} />
+  )
 }
 
 interface HandleProps {

@@ -19,7 +19,17 @@ export interface PlotTextProps {
 }
 
 /** Lettering of the drawings: the condensed face, or the mono one for values. */
-export function PlotText({ x, y, color, anchor = 'start', isStrong, isValue, halo, rotation, children }: PlotTextProps) {
+export function PlotText({
+  x,
+  y,
+  color,
+  anchor = 'start',
+  isStrong,
+  isValue,
+  halo,
+  rotation,
+  children,
+}: PlotTextProps) {
   const common = {
     x,
     y,

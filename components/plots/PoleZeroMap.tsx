@@ -171,7 +171,15 @@ function Ground({ frame, plane, theme }: { frame: Frame; plane: Plane; theme: Pa
   )
 }
 
-function RingLabels({ frame: { centre, axis, radius, width }, plane, theme }: { frame: Frame; plane: Plane; theme: Palette }) {
+function RingLabels({
+  frame: { centre, axis, radius, width },
+  plane,
+  theme,
+}: {
+  frame: Frame
+  plane: Plane
+  theme: Palette
+}) {
   return plane.rings.map((ring) => {
     const r = radiusShare(plane, ring) * radius
     const label = decadeLabel(Math.round(Math.log10(ring)))

@@ -43,7 +43,12 @@ const OHM_STEPS = [20, 40]
 const PHASE_STEPS = [15, 30, 45, 90, 180]
 const DEEPEST = 140 // dB under the top of the axis; a notch further down says nothing more
 
-export function panelsOf(curves: readonly BodeCurve[], band: BodeBand | null, scale: GainScale, height: number): Panel[] {
+export function panelsOf(
+  curves: readonly BodeCurve[],
+  band: BodeBand | null,
+  scale: GainScale,
+  height: number,
+): Panel[] {
   const inner = height - TOP - BOTTOM - BETWEEN
   const split = TOP + inner * 0.56
   const all = [...curves.map((curve) => curve.response), ...(band ? [band.low, band.high] : [])]
@@ -107,7 +112,8 @@ export function bandOf(curves: readonly ResponseCurve[]): BodeBand | null {
 export function nearestIndex(frequencies: readonly number[], frequency: number): number {
   let best = 0
   for (let index = 1; index < frequencies.length; index += 1) {
-    const closer = Math.abs(Math.log(frequencies[index]! / frequency)) < Math.abs(Math.log(frequencies[best]! / frequency))
+    const closer =
+      Math.abs(Math.log(frequencies[index]! / frequency)) < Math.abs(Math.log(frequencies[best]! / frequency))
     if (closer) best = index
   }
   return best

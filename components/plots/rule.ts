@@ -18,7 +18,9 @@ export interface RuleMark {
 const GAP = 10 // px between neighbouring marks
 
 export function ruleScale(switchingFrequency: number, left: number, right: number) {
-  return scaleLog().domain([lowestFrequency(switchingFrequency), switchingFrequency]).range([left, right])
+  return scaleLog()
+    .domain([lowestFrequency(switchingFrequency), switchingFrequency])
+    .range([left, right])
 }
 export type RuleScale = ReturnType<typeof ruleScale>
 

@@ -22,7 +22,10 @@ const FEWEST_DECADES = 2
 
 /** Rings that hold every root. The centre stands for a decade below the slowest root. */
 export function planeOf(roots: readonly PlaneRoot[]): Plane {
-  const exponents = roots.map(({ root }) => root.frequency).filter((hertz) => hertz > 0).map(Math.log10)
+  const exponents = roots
+    .map(({ root }) => root.frequency)
+    .filter((hertz) => hertz > 0)
+    .map(Math.log10)
   const least = exponents.length === 0 ? 2 : Math.min(...exponents)
   const greatest = exponents.length === 0 ? 5 : Math.max(...exponents)
   const lowest = Math.floor(least - 0.35)

@@ -39,7 +39,11 @@ export function NetworkSchematic({ design }: NetworkSchematicProps) {
         <Svg width={Math.max(WIDTH, width)} height={HEIGHT} aria-hidden>
           <G transform={`translate(${left} 0)`}>
             <Divider {...shared} lower={lower} />
-            <Amplifier reference={formatEntry(sense.referenceVoltage, 'V')} isCurrent={amplifier.kind === 'transconductance'} ink={ink} />
+            <Amplifier
+              reference={formatEntry(sense.referenceVoltage, 'V')}
+              isCurrent={amplifier.kind === 'transconductance'}
+              ink={ink}
+            />
             {amplifier.kind === 'op-amp' ? (
               <Feedback {...shared} isTypeI={compensator.type === 'I'} />
             ) : (
@@ -140,7 +144,15 @@ function Divider({ parts, hasLead, lower, ink }: NetworkProps & { readonly lower
   )
 }
 
-function Amplifier({ reference, isCurrent, ink }: { readonly reference: string; readonly isCurrent: boolean; readonly ink: Ink }) {
+function Amplifier({
+  reference,
+  isCurrent,
+  ink,
+}: {
+  readonly reference: string
+  readonly isCurrent: boolean
+  readonly ink: Ink
+}) {
   return (
     <G>
       <Path d={`M188 146V198L${OUT.x} ${OUT.y}z`} stroke={ink.color} strokeWidth={STROKE} fill={ink.ground} />
@@ -215,7 +227,13 @@ function Shunt({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: boole
           <Junction x={310} y={top} color={ink.color} />
           <Capacitor x={310} y={112} isVertical color={ink.color} ground={ink.ground} />
           <Earth x={310} y={150} color={ink.color} />
-          <Lines x={310} y={182} lines={['C2', parts.C2 ? valueOf('C2', parts.C2) : 'not fitted']} color={ink.value} isCentred />
+          <Lines
+            x={310}
+            y={182}
+            lines={['C2', parts.C2 ? valueOf('C2', parts.C2) : 'not fitted']}
+            color={ink.value}
+            isCentred
+          />
         </>
       )}
     </G>

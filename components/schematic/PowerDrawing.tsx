@@ -33,7 +33,9 @@ export function PowerDrawing({ design, layout, color, ground, valueColor }: Draw
   const middle = (top + bottom) / 2
   const ink = { color, ground }
   const isBoost = design.topology === 'boost'
-  const beside = (x: number, lines: readonly string[], y = middle) => <Lines x={x} y={y} lines={lines} color={valueColor} />
+  const beside = (x: number, lines: readonly string[], y = middle) => (
+    <Lines x={x} y={y} lines={lines} color={valueColor} />
+  )
   const above = (x: number, lines: readonly string[]) => (
     <Lines x={x} y={top - 26} lines={lines} color={valueColor} isCentred />
   )
@@ -127,7 +129,19 @@ function Bank({ x, top, bottom, hasEsr, color, ground }: BankProps) {
   )
 }
 
-function Load({ kind, x, y, color, ground }: { kind: DesignDocument['load']; x: number; y: number; color: string; ground: string }) {
+function Load({
+  kind,
+  x,
+  y,
+  color,
+  ground,
+}: {
+  kind: DesignDocument['load']
+  x: number
+  y: number
+  color: string
+  ground: string
+}) {
   if (kind === 'constant-current') {
     return (
       <G>

@@ -33,8 +33,20 @@ export function StageSchematic({ design, onPart }: StageSchematicProps) {
           <View style={{ width: layout.width, height: layout.height }}>
             <Svg width={layout.width} height={layout.height} aria-hidden>
               <G>
-                <PowerDrawing design={design} layout={layout} color={theme.ink} ground={theme.sheet} valueColor={theme.gain} />
-                <ControlDrawing design={design} layout={layout} color={theme.ink} ground={theme.sheet} valueColor={theme.gain} />
+                <PowerDrawing
+                  design={design}
+                  layout={layout}
+                  color={theme.ink}
+                  ground={theme.sheet}
+                  valueColor={theme.gain}
+                />
+                <ControlDrawing
+                  design={design}
+                  layout={layout}
+                  color={theme.ink}
+                  ground={theme.sheet}
+                  valueColor={theme.gain}
+                />
               </G>
             </Svg>
             {hitBoxes(design, layout).map(({ part, label, x, y, width, height }) => (
@@ -43,7 +55,10 @@ export function StageSchematic({ design, onPart }: StageSchematicProps) {
                 role="button"
                 aria-label={`${label}. Change`}
                 onPress={() => onPart(part)}
-                style={[styles.hit, { left: x, top: y, width: Math.max(TARGET, width), height: Math.max(TARGET, height) }]}
+                style={[
+                  styles.hit,
+                  { left: x, top: y, width: Math.max(TARGET, width), height: Math.max(TARGET, height) },
+                ]}
               />
             ))}
           </View>

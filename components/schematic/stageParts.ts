@@ -25,7 +25,10 @@ export function partValues(design: DesignDocument) {
     modulator:
       modulator.kind === 'voltage-mode'
         ? ['Voltage mode', `ramp ${formatEntry(modulator.rampAmplitude, 'V')}`]
-        : [`Peak current, ${formatEntry(modulator.currentSenseResistance, 'Ω')}`, `slope ${formatEntry(modulator.slopeCompensation, 'V/s')}`],
+        : [
+            `Peak current, ${formatEntry(modulator.currentSenseResistance, 'Ω')}`,
+            `slope ${formatEntry(modulator.slopeCompensation, 'V/s')}`,
+          ],
     amplifier: [amplifierName(amplifier), `reference ${formatEntry(sense.referenceVoltage, 'V')}`],
   }
 }
@@ -56,7 +59,12 @@ export interface HitBox extends Box {
 export function hitBoxes(design: DesignDocument, layout: StageLayout): HitBox[] {
   const { top, bottom, node, beforeNode, afterNode, source, banks, load, control, width } = layout
   const values = partValues(design)
-  const upright = (x: number, right: number) => ({ x: x - 16, y: top + 26, width: right - x + 14, height: bottom - top - 44 })
+  const upright = (x: number, right: number) => ({
+    x: x - 16,
+    y: top + 26,
+    width: right - x + 14,
+    height: bottom - top - 44,
+  })
   const along = (x: number) => ({ x: x - 32, y: 2, width: 64, height: top + 10 })
   const isBuck = design.topology !== 'boost'
   const spot = {
@@ -79,12 +87,22 @@ export function hitBoxes(design: DesignDocument, layout: StageLayout): HitBox[] 
     {
       part: { kind: 'modulator' },
       label: say('Modulator', values.modulator),
-      ...{ x: control.left, y: control.top, width: control.middle - control.left - 14, height: control.bottom - control.top },
+      ...{
+        x: control.left,
+        y: control.top,
+        width: control.middle - control.left - 14,
+        height: control.bottom - control.top,
+      },
     },
     {
       part: { kind: 'amplifier' },
       label: say('Error amplifier', values.amplifier),
-      ...{ x: control.middle + 14, y: control.top, width: control.right - control.middle - 14, height: control.bottom - control.top },
+      ...{
+        x: control.middle + 14,
+        y: control.top,
+        width: control.right - control.middle - 14,
+        height: control.bottom - control.top,
+      },
     },
   ]
 }

@@ -15,11 +15,24 @@ export interface SymbolProps {
 /** Half the length of a symbol along its wire. */
 export const HALF = { resistor: 15, inductor: 20, capacitor: 4, diode: 8, transistor: 13, source: 13 } as const
 
-function Turned({ x, y, isVertical, children }: Pick<SymbolProps, 'x' | 'y' | 'isVertical'> & { children: React.ReactNode }) {
+function Turned({
+  x,
+  y,
+  isVertical,
+  children,
+}: Pick<SymbolProps, 'x' | 'y' | 'isVertical'> & { children: React.ReactNode }) {
   return <G transform={`translate(${x} ${y})${isVertical ? ' rotate(90)' : ''}`}>{children}</G>
 }
 
-export function Wire({ d, color, isDashed }: { readonly d: string; readonly color: string; readonly isDashed?: boolean }) {
+export function Wire({
+  d,
+  color,
+  isDashed,
+}: {
+  readonly d: string
+  readonly color: string
+  readonly isDashed?: boolean
+}) {
   return <Path d={d} stroke={color} strokeWidth={STROKE} strokeDasharray={isDashed ? '4 3' : undefined} fill="none" />
 }
 
@@ -39,7 +52,12 @@ export function Inductor({ color, ground, ...at }: SymbolProps) {
   return (
     <Turned {...at}>
       <Rect x={-20} y={-8} width={40} height={10} fill={ground} />
-      <Path d="M-20 0a5 5 0 0 1 10 0a5 5 0 0 1 10 0a5 5 0 0 1 10 0a5 5 0 0 1 10 0" stroke={color} strokeWidth={STROKE} fill="none" />
+      <Path
+        d="M-20 0a5 5 0 0 1 10 0a5 5 0 0 1 10 0a5 5 0 0 1 10 0a5 5 0 0 1 10 0"
+        stroke={color}
+        strokeWidth={STROKE}
+        fill="none"
+      />
     </Turned>
   )
 }
@@ -99,10 +117,27 @@ export function CurrentSource({ color, ground, ...at }: SymbolProps) {
 }
 
 export function Earth({ x, y, color }: { readonly x: number; readonly y: number; readonly color: string }) {
-  return <Path d={`M${x} ${y}v7M${x - 9} ${y + 7}h18M${x - 5.5} ${y + 11}h11M${x - 2} ${y + 15}h4`} stroke={color} strokeWidth={STROKE} fill="none" />
+  return (
+    <Path
+      d={`M${x} ${y}v7M${x - 9} ${y + 7}h18M${x - 5.5} ${y + 11}h11M${x - 2} ${y + 15}h4`}
+      stroke={color}
+      strokeWidth={STROKE}
+      fill="none"
+    />
+  )
 }
 
-export function Arrow({ x, y, to, color }: { readonly x: number; readonly y: number; readonly to: 'left' | 'up' | 'down'; readonly color: string }) {
+export function Arrow({
+  x,
+  y,
+  to,
+  color,
+}: {
+  readonly x: number
+  readonly y: number
+  readonly to: 'left' | 'up' | 'down'
+  readonly color: string
+}) {
   const d = { left: 'l7 -4v8z', up: 'l-4 7h8z', down: 'l-4 -7h8z' }[to]
   return <Path d={`M${x} ${y}${d}`} fill={color} />
 }

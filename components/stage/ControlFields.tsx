@@ -77,7 +77,10 @@ export function AmplifierFields() {
       ) : null}
       <Fields>
         <DraftField path="sense.referenceVoltage" />
-        <DraftField path={compensator?.parts.R1 ? 'compensator.parts.R1' : 'sense.upperResistance'} label="Upper divider resistor" />
+        <DraftField
+          path={compensator?.parts.R1 ? 'compensator.parts.R1' : 'sense.upperResistance'}
+          label="Upper divider resistor"
+        />
       </Fields>
       {compensator ? (
         <Text variant="small" tone="quiet">

@@ -22,7 +22,10 @@ export function Page({ title, actions, children }: PageProps) {
       <Head>
         <title>{`${title} · Steadrail`}</title>
       </Head>
-      <View role="banner" style={[styles.head, { borderBottomColor: theme.rule, paddingHorizontal: isWide ? 48 : space.lg }]}>
+      <View
+        role="banner"
+        style={[styles.head, { borderBottomColor: theme.rule, paddingHorizontal: isWide ? 48 : space.lg }]}
+      >
         <Wordmark />
         <View style={styles.actions}>{actions}</View>
       </View>

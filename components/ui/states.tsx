@@ -1,4 +1,4 @@
-import { useEffect, useRef, type ReactNode } from 'react'
+import { useEffect, useState, type ReactNode } from 'react'
 import { Animated, Easing, StyleSheet, View } from 'react-native'
 import { Button, LinkButton, type ButtonProps } from './Button'
 import { Text } from './Text'
@@ -56,7 +56,7 @@ export function ErrorState({
 export function Loading({ label, bars }: { readonly label: string; readonly bars: readonly number[] }) {
   const theme = useTheme()
   const isStill = useReducedMotion()
-  const breath = useRef(new Animated.Value(1)).current
+  const [breath] = useState(() => new Animated.Value(1))
   useEffect(() => {
     if (isStill) return
     const half = (toValue: number) =>

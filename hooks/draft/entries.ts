@@ -70,7 +70,9 @@ const MOST_DIGITS = 9
 /** The shortest text that reads back as the same value: 4.7 µH, not 4.70 µH; 4.7123 µH, not 4.71 µH. */
 export function formatEntry(value: number, unit: Unit): string {
   for (let digits = 3; digits <= MOST_DIGITS; digits += 1) {
-    const text = formatQuantity(value, unit, digits).replace(/(\.\d*?)0+(?=\D|$)/, '$1').replace(/\.(?=\D|$)/, '')
+    const text = formatQuantity(value, unit, digits)
+      .replace(/(\.\d*?)0+(?=\D|$)/, '$1')
+      .replace(/\.(?=\D|$)/, '')
     const back = parseQuantity(text, unit)
     if (back.kind === 'value' && Math.abs(back.value - value) <= 1e-12 * Math.abs(value)) return text
   }

@@ -30,7 +30,11 @@ const FIELDS: Readonly<Record<string, FieldSpec>> = {
   'rectifier.onResistance': { label: 'Rectifier on-resistance', unit: 'Ω' },
   'rectifier.forwardVoltage': { label: 'Rectifier forward voltage', unit: 'V' },
   'modulator.rampAmplitude': { label: 'Ramp amplitude', unit: 'V', hint: 'Peak to peak, over one period' },
-  'modulator.currentSenseResistance': { label: 'Current-sense gain', unit: 'Ω', hint: 'Volts at the comparator per ampere' },
+  'modulator.currentSenseResistance': {
+    label: 'Current-sense gain',
+    unit: 'Ω',
+    hint: 'Volts at the comparator per ampere',
+  },
   'modulator.slopeCompensation': { label: 'Slope compensation', unit: 'V/s' },
   dutyLimit: { label: 'Duty limit', unit: '%' },
   'amplifier.gainBandwidth': { label: 'Gain-bandwidth', unit: 'Hz' },

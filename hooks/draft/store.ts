@@ -1,7 +1,15 @@
 /** The draft of this browser: one store that every screen reads, kept in local storage, shared between its tabs. */
 import type { DesignDocument } from '@/converters/document'
 import { settle, type Texts } from './entries'
-import { DRAFT_KEY, newDraft, readDraft, type Draft, type PointChoice, type SeriesChoice, type StoredDraft } from './schema'
+import {
+  DRAFT_KEY,
+  newDraft,
+  readDraft,
+  type Draft,
+  type PointChoice,
+  type SeriesChoice,
+  type StoredDraft,
+} from './schema'
 
 const MOST_UNDO = 30
 const listeners = new Set<() => void>()

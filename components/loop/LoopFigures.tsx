@@ -1,0 +1,53 @@
+import { figure, modulusVerdict, ratio, verdictOf } from '@/components/format'
+import { Figure } from '@/components/ui/Figure'
+import { FigureGrid } from '@/components/ui/FigureGrid'
+import { formatQuantity } from '@/converters/quantities'
+import type { CornerSet, Margins } from '@/converters/results'
+import type { DesignDocument } from '@/converters/document'
+
+export interface LoopFiguresProps {
+  readonly margins: Margins
+  readonly corners: CornerSet | undefined
+  readonly targets: DesignDocument['targets']
+}
+
+/** Crossover and margins, each with its verdict, and the worst corner behind them. */
+export function LoopFigures({ margins, corners, targets }: LoopFiguresProps) {
+  const worst = corners?.corners[corners.worst]
+  const unstable = margins.isStable ? undefined : 'unstable'
+  return (
+    <FigureGrid least={150}>
+      <Figure label="Crossover" value={figure(margins.crossover, 'Hz')} note={unstable} />
+      <Figure
+        label="Phase margin"
+        value={figure(margins.phaseMargin, '°')}
+        verdict={verdictOf(margins.phaseMargin, targets.phaseMargin, '°')}
+        note={`aim ${figure(targets.phaseMargin, '°')}`}
+      />
+      <Figure
+        label="Gain margin"
+        value={figure(margins.gainMargin, 'dB')}
+        verdict={verdictOf(margins.gainMargin, targets.gainMargin, 'dB')}
+        note={`aim ${figure(targets.gainMargin, 'dB')}`}
+      />
+      <Figure
+        label="Modulus margin"
+        value={ratio(margins.modulusMargin)}
+        verdict={modulusVerdict(margins.modulusMargin)}
+        note={margins.delayMargin === null ? undefined : `delay margin ${figure(margins.delayMargin, 's')}`}
+      />
+      <Figure
+        label="Phase margin, worst corner"
+        value={worst ? (worst.margins.isStable ? figure(worst.margins.phaseMargin, '°') : 'unstable') : '…'}
+        verdict={
+          worst && (worst.margins.isStable ? verdictOf(worst.margins.phaseMargin, targets.phaseMargin, '°') : 'short')
+        }
+        note={
+          worst
+            ? `${formatQuantity(worst.lineVoltage, 'V')}, ${formatQuantity(worst.outputCurrent, 'A')}`
+            : 'over line and load'
+        }
+      />
+    </FigureGrid>
+  )
+}
