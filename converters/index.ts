@@ -14,6 +14,8 @@ export function analyseCorners(design: unknown, options: CornerOptions = {}): Co
   return cornersOf(parseDesign(design), options)
 }
 
+export { proposeCompensator } from './compensators/propose'
+export { proposeStage } from './quickStart'
 export { ENGINE_VERSION } from './version'
 export { DesignError, type DesignErrorCode, type FieldProblem } from './errors'
 export * from './document'
