@@ -23,7 +23,7 @@ export async function startProduct(): Promise<Product> {
   const threads = availableParallelism()
   const env = {
     ...process.env,
-    NODE_ENV: 'production',
+    NODE_ENV: 'production' as const,
     DATABASE_URL: database.url,
     PORT: port,
     COMPUTE_THREADS: String(threads),
