@@ -1,5 +1,4 @@
 import { analyse, analyseCorners, proposeCompensator, proposeStage } from '@/converters'
-import { DesignDocument } from '@/converters/document'
 import type { TaskRequest } from '@/server/compute/messages'
 import type { Analysis } from '@/server/contract/analyses'
 import type { CompensatorProposals } from '@/server/contract/compensators'
@@ -23,10 +22,7 @@ export function compute(request: TaskRequest): Answer {
       const { design, options } = request.input
       return proposeCompensator(design, options) satisfies CompensatorProposals
     }
-    case 'stageProposal': {
-      const { design, choices } = proposeStage(request.input.requirements)
-      // The whole document, so that what is shown and saved has every value in it.
-      return { design: DesignDocument.parse(design), choices } satisfies StageProposal
-    }
+    case 'stageProposal':
+      return proposeStage(request.input.requirements) satisfies StageProposal
   }
 }
