@@ -8,7 +8,7 @@ import autocannon from 'autocannon'
 import express from 'express'
 
 import type { BenchLine } from '@/scripts/bench/line'
-import type { Product } from '@/scripts/bench/product'
+import type { Product } from '@/scripts/browser/product'
 import { benchDesign, benchFrequencies } from '@/scripts/bench/subject'
 
 const CLIENTS = 50
