@@ -33,7 +33,7 @@ export default function LandingScreen() {
       actions={hasDraft ? <LinkButton label="Open design" href="/design/stage" /> : null}
     >
       <View style={styles.hero}>
-        <Text variant="display" heading={1} style={isWide ? undefined : styles.phoneDisplay}>
+        <Text variant="display" heading={1} style={isWide ? styles.display : styles.phoneDisplay}>
           The loop of your converter, closed with parts you can buy.
         </Text>
         <Text variant="lead" tone="quiet">
@@ -82,6 +82,7 @@ function StepCard({ number, title, text }: { readonly number: number; readonly t
 
 const styles = StyleSheet.create({
   hero: { gap: space.lg, maxWidth: 820, paddingTop: space.lg },
+  display: { maxWidth: 640 },
   phoneDisplay: { fontSize: 33.2, lineHeight: 38 },
   row: { flexDirection: 'row', flexWrap: 'wrap', gap: space.md },
   steps: { gap: space.xl },

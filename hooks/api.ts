@@ -30,7 +30,12 @@ function sentenceOf(failure: ApiFailure): string {
 export function fieldProblems(error: unknown): readonly FieldProblem[] {
   if (!(error instanceof ApiError) || error.failure.kind !== 'problem') return []
   const problems = error.failure.problem.errors ?? []
-  return problems.map(({ field, message }) => ({ field: field.replace(/^(design|requirements)\./, ''), message }))
+  return problems.map(({ field, message }) => ({ field: pathOf(field), message }))
+}
+
+/** `design.outputCapacitors[0].esr` is `outputCapacitors.0.esr` on the screens. */
+export function pathOf(field: string): string {
+  return field.replace(/^(design|requirements)\./, '').replace(/\[(\d+)\]/g, '.$1')
 }
 
 /** The same by path, the first sentence of each. */

@@ -49,8 +49,8 @@ export default function LoopScreen() {
             ) : (
               <Loading label="Looking for the room that the crossover has" bars={[240]} />
             )}
-            <WizardCard />
             <NetworkCard />
+            <WizardCard />
           </>
         }
         curves={

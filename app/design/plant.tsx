@@ -1,4 +1,5 @@
 import Head from 'expo-router/head'
+import { StyleSheet, View } from 'react-native'
 import { Caution, Warnings } from '@/components/design/Cautions'
 import { Columns } from '@/components/design/Columns'
 import { EntryNotice } from '@/components/design/EntryNotice'
@@ -40,6 +41,13 @@ export default function PlantScreen() {
                 <OperatingFigures point={analysis.operatingPoint} />
                 <Ceiling zeros={analysis.plant.zeros} />
                 <Warnings warnings={analysis.warnings} />
+                <Card title="Poles and zeros">
+                  <RootsTable
+                    label="Poles and zeros of the plant"
+                    poles={analysis.plant.poles}
+                    zeros={analysis.plant.zeros}
+                  />
+                </Card>
               </>
             ) : (
               waiting
@@ -52,15 +60,8 @@ export default function PlantScreen() {
               <Card>
                 <Responses analysis={analysis} switchingFrequency={design.switchingFrequency} />
               </Card>
-              <Card
-                title="Poles and zeros"
-                action={<LinkButton kind="quiet" icon="arrow" label="Close the loop" href="/design/loop" />}
-              >
-                <RootsTable
-                  label="Poles and zeros of the plant"
-                  poles={analysis.plant.poles}
-                  zeros={analysis.plant.zeros}
-                />
+              <Card title="Closed forms">
+                <ClosedForms forms={analysis.plant.closedForms} />
               </Card>
             </>
           ) : (
@@ -76,9 +77,9 @@ export default function PlantScreen() {
                   Direction is damping, distance is frequency. Of each pair the upper one is drawn.
                 </Text>
               </Card>
-              <Card title="Closed forms">
-                <ClosedForms forms={analysis.plant.closedForms} />
-              </Card>
+              <View style={styles.next}>
+                <LinkButton kind="primary" icon="arrow" label="Close the loop" href="/design/loop" />
+              </View>
               <Caution />
             </>
           ) : null
@@ -94,3 +95,5 @@ function planeRoots({ poles, zeros }: Plant): PlaneRoot[] {
     ...upperHalf(zeros).map((root) => ({ root, kind: 'zero' as const, owner: 'stage' as const })),
   ]
 }
+
+const styles = StyleSheet.create({ next: { alignSelf: 'flex-start' } })

@@ -25,9 +25,11 @@ import { Loading } from '@/components/ui/states'
 import { Text } from '@/components/ui/Text'
 import { useDraft } from '@/hooks/draft/useDraft'
 import { useDesignAnalysis } from '@/hooks/useDesignAnalysis'
+import { useLayout } from '@/hooks/useLayout'
 
 export default function StageScreen() {
   const { design } = useDraft()
+  const { isExtraWide } = useLayout()
   const { analysis, error, isStale, retry } = useDesignAnalysis()
   const [part, setPart] = useState<StagePart | null>(null)
   return (
@@ -53,15 +55,7 @@ export default function StageScreen() {
             <Card title="Output capacitors">
               <BanksFields />
             </Card>
-            <Card title="Modulator">
-              <ModulatorFields />
-            </Card>
-            <Card title="Error amplifier and divider">
-              <AmplifierFields />
-            </Card>
-            <Card title="What the loop should hold">
-              <TargetFields />
-            </Card>
+            {isExtraWide ? null : <ControlCards />}
           </>
         }
         curves={
@@ -78,6 +72,7 @@ export default function StageScreen() {
               </Text>
             </Card>
             {analysis ? <Warnings warnings={analysis.warnings} /> : null}
+            {isExtraWide ? <ControlCards /> : null}
           </>
         }
         figures={
@@ -93,6 +88,23 @@ export default function StageScreen() {
         }
       />
       <PartSheet part={part} onClose={() => setPart(null)} />
+    </>
+  )
+}
+
+/** The way back from the output: below the schematic where there is room, after the stage's parts otherwise. */
+function ControlCards() {
+  return (
+    <>
+      <Card title="Modulator">
+        <ModulatorFields />
+      </Card>
+      <Card title="Error amplifier and divider">
+        <AmplifierFields />
+      </Card>
+      <Card title="What the loop should hold">
+        <TargetFields />
+      </Card>
     </>
   )
 }

@@ -44,8 +44,8 @@ export function Columns({ inputs, curves, figures, phoneOrder }: ColumnsProps) {
         </>
       ) : (
         <Column>
-          {figures}
           {curves}
+          {figures}
         </Column>
       )}
     </View>

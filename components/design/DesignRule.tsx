@@ -1,6 +1,8 @@
 import { StyleSheet, View } from 'react-native'
+import { ROLE_NAMES } from '@/components/roots'
 import { FrequencyRule } from '@/components/plots/FrequencyRule'
 import { space } from '@/constants/theme'
+import type { Root } from '@/converters/results'
 import { draftStore } from '@/hooks/draft/store'
 import { useDraft } from '@/hooks/draft/useDraft'
 import { useDesignAnalysis } from '@/hooks/useDesignAnalysis'
@@ -22,8 +24,8 @@ export function DesignRule() {
     <View style={[styles.frame, { borderBottomColor: theme.rule, paddingHorizontal: isWide ? space.lg : 0 }]}>
       <FrequencyRule
         switchingFrequency={design.switchingFrequency}
-        plant={analysis?.plant ?? NONE}
-        network={loop ? { poles: loop.compensatorPoles, zeros: loop.compensatorZeros } : NONE}
+        plant={analysis ? named(analysis.plant.poles, analysis.plant.zeros) : NONE}
+        network={loop ? named(loop.compensatorPoles, loop.compensatorZeros) : NONE}
         window={proposals?.window ?? null}
         crossover={loop ? (analysis?.margins?.crossover ?? null) : null}
         wanted={design.targets.crossover ?? proposals?.suggestion?.crossover ?? null}
@@ -31,6 +33,11 @@ export function DesignRule() {
       />
     </View>
   )
+}
+
+function named(poles: readonly Root[], zeros: readonly Root[]) {
+  const withName = (root: Root) => ({ ...root, name: ROLE_NAMES[root.role] })
+  return { poles: poles.map(withName), zeros: zeros.map(withName) }
 }
 
 const styles = StyleSheet.create({ frame: { borderBottomWidth: 1, paddingTop: space.xs } })

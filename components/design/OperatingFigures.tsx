@@ -13,6 +13,7 @@ export function OperatingFigures({ point }: { readonly point: OperatingPoint }) 
       <Figure label="Duty cycle" value={ratio(point.dutyCycle, 4)} note={`at ${at}`} />
       <Figure
         label="Conduction"
+        isWord
         value={point.conduction === 'continuous' ? 'continuous' : 'discontinuous'}
         note={boundaryCurrent === null ? 'synchronous rectifier' : `boundary at ${figure(boundaryCurrent, 'A')}`}
       />
@@ -23,11 +24,7 @@ export function OperatingFigures({ point }: { readonly point: OperatingPoint }) 
         note={`valley ${figure(inductorCurrent.valley, 'A')}`}
       />
       <Figure label="Output ripple" value={figure(point.outputRipple, 'V')} note="peak to peak" />
-      <Figure
-        label="Efficiency"
-        value={formatQuantity(point.efficiency, '%')}
-        note={`conduction only; ${figure(point.inputPower, 'W')} in`}
-      />
+      <Figure label="Efficiency" value={formatQuantity(point.efficiency, '%')} note={`conduction losses only`} />
     </FigureGrid>
   )
 }

@@ -28,7 +28,7 @@ export function LoopFigures({ margins, corners, targets }: LoopFiguresProps) {
         label="Gain margin"
         value={figure(margins.gainMargin, 'dB')}
         verdict={verdictOf(margins.gainMargin, targets.gainMargin, 'dB')}
-        note={`aim ${figure(targets.gainMargin, 'dB')}`}
+        note={margins.gainMargin === null ? 'phase stays above −180°' : `aim ${figure(targets.gainMargin, 'dB')}`}
       />
       <Figure
         label="Modulus margin"

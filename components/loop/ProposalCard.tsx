@@ -1,3 +1,4 @@
+import { useState } from 'react'
 import { StyleSheet, View } from 'react-native'
 import { figure, verdictOf } from '@/components/format'
 import { Button } from '@/components/ui/Button'
@@ -62,19 +63,19 @@ export function ProposalCard({ proposal, isFirst, targets }: ProposalCardProps) 
       <Table
         label={`Margins, ${name}`}
         columns={[
-          { title: '', width: 86 },
+          { title: 'Figure', width: 66 },
           { title: 'Ideal', width: 72, isNumber: true },
           { title: 'Preferred', width: 72, isNumber: true },
-          { title: 'Worst corner', width: 86, isNumber: true },
+          { title: 'Worst', width: 72, isNumber: true },
         ]}
         rows={[
           marginRow('Crossover', [margins.ideal.nominal, margins.preferred.nominal, worst], (m) =>
             figure(m.crossover, 'Hz'),
           ),
-          marginRow('Phase margin', [margins.ideal.nominal, margins.preferred.nominal, worst], (m) =>
+          marginRow('Phase', [margins.ideal.nominal, margins.preferred.nominal, worst], (m) =>
             m.isStable ? figure(m.phaseMargin, '°') : 'unstable',
           ),
-          marginRow('Gain margin', [margins.ideal.nominal, margins.preferred.nominal, worst], (m) =>
+          marginRow('Gain', [margins.ideal.nominal, margins.preferred.nominal, worst], (m) =>
             figure(m.gainMargin, 'dB'),
           ),
         ]}
@@ -94,11 +95,7 @@ export function ProposalCard({ proposal, isFirst, targets }: ProposalCardProps) 
           ))}
         </Notice>
       ) : null}
-      {reasons.map((reason) => (
-        <Text key={reason} variant="small" tone="quiet">
-          {reason}
-        </Text>
-      ))}
+      <Reasons reasons={reasons} name={name} />
       <View style={styles.left}>
         {isFitted ? (
           <Text variant="strong" tone="holds">
@@ -114,6 +111,30 @@ export function ProposalCard({ proposal, isFirst, targets }: ProposalCardProps) 
         )}
       </View>
     </View>
+  )
+}
+
+/** Why these parts: folded away, so that the figures of several networks can be compared. */
+function Reasons({ reasons, name }: { readonly reasons: readonly string[]; readonly name: string }) {
+  const [isOpen, setOpen] = useState(false)
+  return (
+    <>
+      <View style={styles.left}>
+        <Button
+          kind="quiet"
+          label={isOpen ? 'Hide the reasons' : 'Show the reasons'}
+          spoken={`${isOpen ? 'Hide' : 'Show'} the reasons: ${name}`}
+          onPress={() => setOpen(!isOpen)}
+        />
+      </View>
+      {isOpen
+        ? reasons.map((reason) => (
+            <Text key={reason} variant="small" tone="quiet">
+              {reason}
+            </Text>
+          ))
+        : null}
+    </>
   )
 }
 

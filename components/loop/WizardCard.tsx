@@ -9,6 +9,7 @@ import { Notice } from '@/components/ui/Notice'
 import { Select } from '@/components/ui/Select'
 import { Loading } from '@/components/ui/states'
 import { Fault } from '@/components/design/Fault'
+import { Fields } from '@/components/design/Fields'
 import { space } from '@/constants/theme'
 import type { CompensatorType } from '@/converters/document'
 import { draftStore } from '@/hooks/draft/store'
@@ -34,7 +35,7 @@ export function WizardCard() {
   })
   const proposals = query.data?.proposals ?? []
   return (
-    <Card title="Network">
+    <Card title="Propose a network">
       <Choice
         label="Type"
         value={wish}
@@ -46,7 +47,7 @@ export function WizardCard() {
         ]}
         onChange={setWish}
       />
-      <View style={styles.row}>
+      <Fields>
         <Select
           label="Resistor series"
           value={series.resistors}
@@ -59,7 +60,7 @@ export function WizardCard() {
           options={SERIES}
           onChange={(capacitors) => draftStore.chooseSeries({ ...series, capacitors })}
         />
-      </View>
+      </Fields>
       <PlacementFields placement={placement} />
       {isShown ? null : (
         <View style={styles.left}>
@@ -85,7 +86,6 @@ export function WizardCard() {
 }
 
 const styles = StyleSheet.create({
-  row: { flexDirection: 'row', gap: space.md },
   left: { alignSelf: 'flex-start' },
   list: { gap: space.md },
 })

@@ -3,20 +3,20 @@ import {
   bandPath,
   BOTTOM,
   curvePath,
+  interpolate,
   labelPlace,
   LEFT,
   panelsOf,
   RIGHT,
   xScaleOf,
   yScaleOf,
-  type BodeCurve,
+  type BodePlotProps,
   type Panel,
   type XScale,
 } from './bode'
 import { textWidth, type Box } from './layout'
 import { PlotText } from './PlotText'
 import { decadeSubdivisions, decadeTicks, ohmLabel } from './ticks'
-import { interpolate, type BodePlotProps } from './BodePlot'
 import { figure } from '@/components/format'
 import type { Palette } from '@/constants/theme'
 import { useTheme } from '@/hooks/useTheme'
@@ -40,9 +40,7 @@ export function BodeDrawing(props: BodeDrawingProps) {
   } = props
   const theme = useTheme()
   const x = xScaleOf(frequencies, width)
-  // The axis of a loop's phase always shows −180°, from which the margin is read.
-  const anchored = crossover ? [...curves, MINUS_180] : curves
-  const panels = panelsOf(anchored, band, gainScale, height)
+  const panels = panelsOf(props, height)
   const halfSwitching = x(switchingFrequency / 2)
   return (
     <Svg width={width} height={height} aria-hidden>
@@ -100,8 +98,6 @@ export function BodeDrawing(props: BodeDrawingProps) {
     </Svg>
   )
 }
-
-const MINUS_180: BodeCurve = { key: '', label: '', response: [{ gainDb: 0, phaseDeg: -180 }] }
 
 const curveColor = (panel: Panel, theme: Palette) => (panel.quantity === 'gainDb' ? theme.gain : theme.phase)
 const bandColor = (panel: Panel, theme: Palette) => (panel.quantity === 'gainDb' ? theme.gainBand : theme.phaseBand)

@@ -1,7 +1,7 @@
 import { useMemo, useState } from 'react'
 import { StyleSheet, View } from 'react-native'
 import { BodeDrawing } from './BodeDrawing'
-import { LEFT, nearestIndex, RIGHT, type BodeBand, type BodeCurve, type GainScale } from './bode'
+import { interpolate, LEFT, RIGHT, type BodeCurve, type BodePlotProps, type GainScale } from './bode'
 import { PlotFrame, type PlotTable } from './PlotFrame'
 import { capturePointer, readSideways } from './pointer'
 import { afterKey } from './rule'
@@ -10,27 +10,6 @@ import { onKey } from '@/components/ui/keys'
 import { Text } from '@/components/ui/Text'
 import { space } from '@/constants/theme'
 import { formatQuantity } from '@/converters/quantities'
-
-export interface CrossoverMark {
-  readonly frequency: number // Hz
-  readonly phaseMargin: number // degrees
-}
-
-export interface BodePlotProps {
-  readonly title: string
-  readonly fileName: string
-  /** In words, with the figures that matter. */
-  readonly summary: string
-  readonly frequencies: readonly number[] // Hz
-  readonly curves: readonly BodeCurve[]
-  readonly band?: BodeBand | null
-  readonly bandLabel?: string
-  readonly gainTitle: string
-  readonly gainScale?: GainScale
-  readonly crossover?: CrossoverMark | null
-  readonly switchingFrequency: number // Hz
-  readonly height?: number
-}
 
 /** Gain and phase over frequency, with a cursor that reads every curve at one frequency. */
 export function BodePlot(props: BodePlotProps) {
@@ -108,19 +87,6 @@ function gainText(gainDb: number, scale: GainScale): string {
 function reading(curve: BodeCurve, frequencies: readonly number[], cursor: number, scale: GainScale): string {
   const at = interpolate(curve, frequencies, cursor)
   return at ? `${gainText(at.gainDb, scale)}  ${degrees(at.phaseDeg)}` : '–'
-}
-
-/** The curve between its points: straight over the logarithm of frequency. */
-export function interpolate(curve: BodeCurve, frequencies: readonly number[], frequency: number) {
-  const near = nearestIndex(frequencies, frequency)
-  const from = Math.max(0, Math.min(frequencies.length - 2, frequency < frequencies[near]! ? near - 1 : near))
-  const [a, b] = [curve.response[from], curve.response[from + 1]]
-  if (!a || !b) return null
-  const share = Math.log(frequency / frequencies[from]!) / Math.log(frequencies[from + 1]! / frequencies[from]!)
-  return {
-    gainDb: a.gainDb + share * (b.gainDb - a.gainDb),
-    phaseDeg: a.phaseDeg + share * (b.phaseDeg - a.phaseDeg),
-  }
 }
 
 const ROWS_PER_DECADE = 8

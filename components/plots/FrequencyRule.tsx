@@ -4,7 +4,7 @@ import Svg, { Defs, G, Line, Path, Pattern, Rect, TSpan } from 'react-native-svg
 import { PoleMark, ZeroMark } from './marks'
 import { PlotText } from './PlotText'
 import { capturePointer, dragSideways } from './pointer'
-import { afterKey, ruleMarks, ruleScale, type RuleRoot, type RuleScale } from './rule'
+import { afterKey, ruleMarks, ruleNames, ruleScale, type RuleMark, type RuleRoot, type RuleScale } from './rule'
 import { decadeSubdivisions, decadeTicks } from './ticks'
 import { textWidth } from './layout'
 import { figure } from '@/components/format'
@@ -29,10 +29,11 @@ const PILL = { top: 2, height: 26 }
 const PLANT_Y = 46
 const AXIS_Y = 64
 const NETWORK_Y = 82
-const TICK_TEXT_Y = 108
+const TICK_TEXT_Y = 106
 const HEIGHT = 114
 const BAND = 12
 const MARGIN = 14
+const HALF_SWITCHING_LABEL = 36
 
 /**
  * The picture at the head of every screen of a design: a logarithmic rule from 10 Hz to the switching frequency, the
@@ -89,12 +90,20 @@ function Rule(props: FrequencyRuleProps & { readonly width: number }) {
         ) : null}
         <Axis scale={scale} width={width} />
         <HalfSwitching x={scale(switchingFrequency / 2)} />
-        {ruleMarks(plant.poles, plant.zeros, scale).map((mark, index) => (
-          <Mark key={index} {...mark} y={PLANT_Y} color={theme.gain} ground={theme.paper} />
-        ))}
-        {ruleMarks(network.poles, network.zeros, scale).map((mark, index) => (
-          <Mark key={index} {...mark} y={NETWORK_Y} color={theme.accent} ground={theme.paper} />
-        ))}
+        <Marks
+          marks={ruleMarks(plant.poles, plant.zeros, scale)}
+          y={PLANT_Y}
+          color={theme.gain}
+          handle={x}
+          width={width}
+        />
+        <Marks
+          marks={ruleMarks(network.poles, network.zeros, scale)}
+          y={NETWORK_Y}
+          color={theme.accent}
+          handle={x}
+          width={width}
+        />
         {x === null ? null : <Handle x={x} label={label} width={width} isMoving={dragged !== null} />}
       </Svg>
       {x === null || shown === null ? null : (
@@ -148,8 +157,8 @@ function Axis({ scale, width }: { readonly scale: RuleScale; readonly width: num
   const theme = useTheme()
   const [low, high] = scale.domain() as [number, number]
   const ticks = decadeTicks(low, high)
-  // The last label gives way to the mark of half the switching frequency, which stands in the same row.
-  const room = scale(high / 2) - 18
+  // The last label gives way to the name of half the switching frequency, which stands in the same row.
+  const room = width - HALF_SWITCHING_LABEL
   return (
     <G>
       <Line x1={MARGIN} x2={width - MARGIN} y1={AXIS_Y} y2={AXIS_Y} stroke={theme.ink} strokeWidth={1.4} />
@@ -171,7 +180,7 @@ function Axis({ scale, width }: { readonly scale: RuleScale; readonly width: num
         )
       })}
       <PlotText x={width - 1} y={TICK_TEXT_Y} color={theme.quiet} anchor="end">
-        ½ f<TSpan dy={3}>sw</TSpan>
+        ½ f<TSpan dy={2}>sw</TSpan>
       </PlotText>
     </G>
   )
@@ -193,19 +202,36 @@ function Shade({ from, to, color }: { readonly from: number; readonly to: number
   )
 }
 
-interface MarkProps {
-  readonly kind: 'pole' | 'zero'
-  readonly x: number
+/** Names are written from this width on; on a phone the Plant screen tells them. */
+const NAMED_FROM = 680 // px
+
+interface MarksProps {
+  readonly marks: readonly RuleMark[]
   readonly y: number
   readonly color: string
-  readonly ground: string
+  readonly handle: number | null
+  readonly width: number
 }
 
-function Mark({ kind, x, y, color, ground }: MarkProps) {
-  return kind === 'pole' ? (
-    <PoleMark x={x} y={y} color={color} />
-  ) : (
-    <ZeroMark x={x} y={y} color={color} ground={ground} />
+function Marks({ marks, y, color, handle, width }: MarksProps) {
+  const theme = useTheme()
+  const taken = handle === null ? [] : [{ x: handle - 6, y: 0, width: 12, height: HEIGHT }]
+  const names = width < NAMED_FROM ? [] : ruleNames(marks, y, taken)
+  return (
+    <G>
+      {names.map(({ text, x }) => (
+        <PlotText key={`${text} ${x}`} x={x} y={y + 4.5} color={color} anchor="end" halo={theme.paper}>
+          {text}
+        </PlotText>
+      ))}
+      {marks.map(({ kind, x }, index) =>
+        kind === 'pole' ? (
+          <PoleMark key={index} x={x} y={y} color={color} />
+        ) : (
+          <ZeroMark key={index} x={x} y={y} color={color} ground={theme.paper} />
+        ),
+      )}
+    </G>
   )
 }
 

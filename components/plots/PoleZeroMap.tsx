@@ -21,6 +21,7 @@ export interface PoleZeroMapProps {
 const FOOT = 40 // px below the real axis
 const HEAD = 26
 const SIDE = 10
+const LEAST_RING_STEP = 36 // px
 const DAMPINGS = [0.2, 0.5, 0.8] as const
 
 /** Poles and zeros in the s-plane: direction is damping, distance is frequency. */
@@ -86,7 +87,7 @@ function Map({ roots, width }: { readonly roots: readonly PlaneRoot[]; readonly 
   })
   const texts = marks.map(({ item }) => `${ROLE_NAMES[item.root.role]} ${figure(item.root.frequency, 'Hz')}`)
   const obstacles: Box[] = [
-    ...marks.map(({ x, y }) => ({ x: x - 7, y: y - 7, width: 14, height: 14 })),
+    ...marks.map(({ x, y }) => ({ x: x - 6, y: y - 6, width: 12, height: 12 })),
     { x: 0, y: 0, width: 90, height: 22 },
     { x: width - 60, y: 0, width: 60, height: 22 },
     // The ring labels under the real axis and along it.
@@ -180,7 +181,10 @@ function RingLabels({
   plane: Plane
   theme: Palette
 }) {
-  return plane.rings.map((ring) => {
+  // Every ring has its label where they stand far enough apart, every second one otherwise.
+  const stride = radius / plane.decades < LEAST_RING_STEP ? 2 : 1
+  return plane.rings.map((ring, index) => {
+    if ((plane.rings.length - 1 - index) % stride !== 0) return null
     const r = radiusShare(plane, ring) * radius
     const label = decadeLabel(Math.round(Math.log10(ring)))
     const sides = centre + r < width - 12 ? [centre - r, centre + r] : [centre - r]

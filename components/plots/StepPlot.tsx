@@ -50,6 +50,7 @@ export default function StepPlot({ title, fileName, summary, time, deviation }: 
           />
           <VictoryAxis
             dependentAxis
+            crossAxis={false}
             tickCount={5}
             label={`Deviation, ${voltUnit.name}`}
             tickFormat={(value: number) => String(value).replace('-', '−')}

@@ -21,9 +21,31 @@ export interface BodeBand {
   readonly high: ResponseCurve
 }
 
-export type Quantity = 'gainDb' | 'phaseDeg'
 /** What the gain is a ratio of decides how its axis is written. */
 export type GainScale = 'dB' | 'Ω'
+
+export interface CrossoverMark {
+  readonly frequency: number // Hz
+  readonly phaseMargin: number // degrees
+}
+
+export interface BodePlotProps {
+  readonly title: string
+  readonly fileName: string
+  /** In words, with the figures that matter. */
+  readonly summary: string
+  readonly frequencies: readonly number[] // Hz
+  readonly curves: readonly BodeCurve[]
+  readonly band?: BodeBand | null
+  readonly bandLabel?: string
+  readonly gainTitle: string
+  readonly gainScale?: GainScale
+  readonly crossover?: CrossoverMark | null
+  readonly switchingFrequency: number // Hz
+  readonly height?: number
+}
+
+export type Quantity = 'gainDb' | 'phaseDeg'
 
 export const LEFT = 50 // px, room for tick labels and axis title
 export const RIGHT = 10
@@ -43,24 +65,32 @@ const OHM_STEPS = [20, 40]
 const PHASE_STEPS = [15, 30, 45, 90, 180]
 const DEEPEST = 140 // dB under the top of the axis; a notch further down says nothing more
 
+/** Above half the switching frequency the sampled curves fold back: drawn as far as they fit, not measured by. */
+const FOLD = 1.05
+
 export function panelsOf(
-  curves: readonly BodeCurve[],
-  band: BodeBand | null,
-  scale: GainScale,
+  { curves, band = null, gainScale = 'dB', frequencies, switchingFrequency, crossover }: BodePlotProps,
   height: number,
 ): Panel[] {
   const inner = height - TOP - BOTTOM - BETWEEN
   const split = TOP + inner * 0.56
   const all = [...curves.map((curve) => curve.response), ...(band ? [band.low, band.high] : [])]
-  const values = (quantity: Quantity) => all.flatMap((response) => response.map((point) => point[quantity]))
+  const isRead = (index: number) => (frequencies[index] ?? 0) <= (FOLD * switchingFrequency) / 2
+  const values = (quantity: Quantity) =>
+    all.flatMap((response) => response.filter((_, index) => isRead(index)).map((point) => point[quantity]))
   const gains = values('gainDb')
   const top = Math.max(...gains.filter(Number.isFinite), 0)
   const gain = wholeAxis(
     gains.map((value) => Math.max(value, top - DEEPEST)),
-    scale === 'Ω' ? OHM_STEPS : GAIN_STEPS,
+    gainScale === 'Ω' ? OHM_STEPS : GAIN_STEPS,
     Math.max(4, Math.floor((split - TOP) / 30)),
   )
-  const phase = wholeAxis(values('phaseDeg'), PHASE_STEPS, Math.max(4, Math.floor((height - split) / 32)))
+  // The axis of a loop's phase always shows −180°, from which the margin is read.
+  const phase = wholeAxis(
+    [...values('phaseDeg'), ...(crossover ? [-180] : [])],
+    PHASE_STEPS,
+    Math.max(4, Math.floor((height - split) / 32)),
+  )
   return [
     { quantity: 'gainDb', axis: gain, top: TOP, bottom: split },
     { quantity: 'phaseDeg', axis: phase, top: split + BETWEEN, bottom: height - BOTTOM },
@@ -157,4 +187,17 @@ export function labelPlace(
     }
   }
   return null
+}
+
+/** The curve between its points: straight over the logarithm of frequency. */
+export function interpolate(curve: BodeCurve, frequencies: readonly number[], frequency: number) {
+  const near = nearestIndex(frequencies, frequency)
+  const from = Math.max(0, Math.min(frequencies.length - 2, frequency < frequencies[near]! ? near - 1 : near))
+  const [a, b] = [curve.response[from], curve.response[from + 1]]
+  if (!a || !b) return null
+  const share = Math.log(frequency / frequencies[from]!) / Math.log(frequencies[from + 1]! / frequencies[from]!)
+  return {
+    gainDb: a.gainDb + share * (b.gainDb - a.gainDb),
+    phaseDeg: a.phaseDeg + share * (b.phaseDeg - a.phaseDeg),
+  }
 }

@@ -100,7 +100,8 @@ export function placeLabels(
 }
 
 function beside({ x, y, width, height }: LabelRequest, [dx, dy]: readonly [number, number], distance: number): Box {
+  const slope = dx === 0 ? 1 : 0.7
   const left = dx === 0 ? x - width / 2 : dx > 0 ? x + distance : x - distance - width
-  const top = dy === 0 ? y - height / 2 : dy > 0 ? y + distance * 0.7 : y - distance * 0.7 - height
+  const top = dy === 0 ? y - height / 2 : dy > 0 ? y + distance * slope : y - distance * slope - height
   return { x: left, y: top, width, height }
 }

@@ -109,24 +109,25 @@ interface NetworkProps {
   readonly ink: Ink
 }
 
-const NODE = { x: 124, y: 158 }
-const OUT = { x: 236, y: 172 }
+const NODE = { x: 104, y: 158 }
+const INPUT = 146 // where the amplifier's inputs stand
+const OUT = { x: 194, y: 172 }
 
 /** From the output to the amplifier's inverting input. */
 function Divider({ parts, hasLead, lower, ink }: NetworkProps & { readonly lower: number | null }) {
   return (
     <G>
-      <Wire color={ink.color} d={`M8 ${NODE.y}H188`} />
+      <Wire color={ink.color} d={`M8 ${NODE.y}H${INPUT}`} />
       <PlotText x={4} y={NODE.y - 8} color={ink.color}>
         output
       </PlotText>
-      <Part name="R1" parts={parts} x={74} y={NODE.y} ink={ink} side="below" />
+      <Part name="R1" parts={parts} x={56} y={NODE.y} ink={ink} side="below" />
       {hasLead ? (
         <>
-          <Wire color={ink.color} d={`M40 ${NODE.y}V92H${NODE.x}V${NODE.y}`} />
-          <Part name="R3" parts={parts} x={60} y={92} ink={ink} />
-          <Part name="C3" parts={parts} x={106} y={92} ink={ink} />
-          <Junction x={40} y={NODE.y} color={ink.color} />
+          <Wire color={ink.color} d={`M22 ${NODE.y}V92H${NODE.x}V${NODE.y}`} />
+          <Part name="R3" parts={parts} x={44} y={92} ink={ink} />
+          <Part name="C3" parts={parts} x={86} y={92} ink={ink} />
+          <Junction x={22} y={NODE.y} color={ink.color} />
         </>
       ) : null}
       <Junction x={NODE.x} y={NODE.y} color={ink.color} />
@@ -134,8 +135,11 @@ function Divider({ parts, hasLead, lower, ink }: NetworkProps & { readonly lower
         <>
           <Wire color={ink.color} d={`M${NODE.x} ${NODE.y}V238`} />
           <Resistor x={NODE.x} y={206} isVertical color={ink.color} ground={ink.ground} />
-          <PlotText x={NODE.x + 12} y={240} color={ink.color}>
-            {`lower ${formatEntry(Number(lower.toPrecision(3)), 'Ω')}`}
+          <PlotText x={NODE.x - 12} y={212} color={ink.color} anchor="end">
+            lower
+          </PlotText>
+          <PlotText x={NODE.x - 12} y={228} color={ink.color} anchor="end">
+            {formatEntry(Number(lower.toPrecision(3)), 'Ω')}
           </PlotText>
           <Earth x={NODE.x} y={238} color={ink.color} />
         </>
@@ -155,20 +159,20 @@ function Amplifier({
 }) {
   return (
     <G>
-      <Path d={`M188 146V198L${OUT.x} ${OUT.y}z`} stroke={ink.color} strokeWidth={STROKE} fill={ink.ground} />
-      <PlotText x={192} y={163} color={ink.color}>
+      <Path d={`M${INPUT} 146V198L${OUT.x} ${OUT.y}z`} stroke={ink.color} strokeWidth={STROKE} fill={ink.ground} />
+      <PlotText x={INPUT + 4} y={163} color={ink.color}>
         −
       </PlotText>
-      <PlotText x={192} y={191} color={ink.color}>
+      <PlotText x={INPUT + 4} y={191} color={ink.color}>
         +
       </PlotText>
       {isCurrent ? (
-        <PlotText x={203} y={177} color={ink.color}>
+        <PlotText x={INPUT + 14} y={177} color={ink.color}>
           gm
         </PlotText>
       ) : null}
-      <Wire color={ink.color} d="M188 186H172V212" />
-      <PlotText x={160} y={226} color={ink.value} isStrong>
+      <Wire color={ink.color} d={`M${INPUT} 186H130V208`} />
+      <PlotText x={118} y={224} color={ink.value} isStrong>
         {reference}
       </PlotText>
     </G>
@@ -177,25 +181,25 @@ function Amplifier({
 
 /** Op-amp: from the amplifier's output back to its inverting input. */
 function Feedback({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: boolean }) {
-  const right = 296
-  const left = 150
+  const right = 274
+  const left = 124
   return (
     <G>
       <Wire color={ink.color} d={`M${OUT.x} ${OUT.y}H${right + 14}`} />
-      <PlotText x={326} y={OUT.y + 20} color={ink.color} anchor="end">
+      <PlotText x={right + 20} y={OUT.y + 20} color={ink.color} anchor="end">
         control
       </PlotText>
       <Wire color={ink.color} d={`M${left} ${NODE.y}V106H${right}V${OUT.y}`} />
       <Junction x={left} y={NODE.y} color={ink.color} />
       <Junction x={right} y={OUT.y} color={ink.color} />
       {isTypeI ? (
-        <Part name="C1" parts={parts} x={223} y={106} ink={ink} />
+        <Part name="C1" parts={parts} x={199} y={106} ink={ink} />
       ) : (
         <>
-          <Part name="R2" parts={parts} x={190} y={106} ink={ink} />
-          <Part name="C1" parts={parts} x={256} y={106} ink={ink} />
+          <Part name="R2" parts={parts} x={164} y={106} ink={ink} />
+          <Part name="C1" parts={parts} x={234} y={106} ink={ink} />
           <Wire color={ink.color} d={`M${left} 106V44H${right}V106`} isDashed={!parts.C2} />
-          <Part name="C2" parts={parts} x={223} y={44} ink={ink} />
+          <Part name="C2" parts={parts} x={199} y={44} ink={ink} />
           <Junction x={left} y={106} color={ink.color} />
           <Junction x={right} y={106} color={ink.color} />
         </>
@@ -206,12 +210,13 @@ function Feedback({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: bo
 
 /** Transconductance amplifier: from its output to ground. */
 function Shunt({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: boolean }) {
-  const first = 252
+  const first = 216
+  const second = 296
   const top = 40
   return (
     <G>
-      <Wire color={ink.color} d={`M${OUT.x} ${OUT.y}V${top}H324`} />
-      <PlotText x={326} y={top - 8} color={ink.color} anchor="end">
+      <Wire color={ink.color} d={`M${OUT.x} ${OUT.y}V${top}H${second + 16}`} />
+      <PlotText x={second + 18} y={top - 8} color={ink.color} anchor="end">
         control
       </PlotText>
       <Wire color={ink.color} d={`M${first} ${top}V232`} />
@@ -223,12 +228,12 @@ function Shunt({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: boole
         <>
           <Part name="R2" parts={parts} x={first} y={96} ink={ink} isVertical side="right" />
           <Part name="C1" parts={parts} x={first} y={196} ink={ink} isVertical side="right" />
-          <Wire color={ink.color} d={`M310 ${top}V150`} isDashed={!parts.C2} />
-          <Junction x={310} y={top} color={ink.color} />
-          <Capacitor x={310} y={112} isVertical color={ink.color} ground={ink.ground} />
-          <Earth x={310} y={150} color={ink.color} />
+          <Wire color={ink.color} d={`M${second} ${top}V150`} isDashed={!parts.C2} />
+          <Junction x={second} y={top} color={ink.color} />
+          <Capacitor x={second} y={112} isVertical color={ink.color} ground={ink.ground} />
+          <Earth x={second} y={150} color={ink.color} />
           <Lines
-            x={310}
+            x={second}
             y={182}
             lines={['C2', parts.C2 ? valueOf('C2', parts.C2) : 'not fitted']}
             color={ink.value}

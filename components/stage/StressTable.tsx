@@ -16,11 +16,11 @@ export function StressTable({ point }: { readonly point: OperatingPoint }) {
       <Table
         label="Currents and voltages of the parts"
         columns={[
-          { title: '', width: 92 },
-          { title: 'Mean', width: 74, isNumber: true },
-          { title: 'RMS', width: 74, isNumber: true },
-          { title: 'Peak', width: 74, isNumber: true },
-          { title: 'Voltage', width: 74, isNumber: true },
+          { title: 'Part', width: 74 },
+          { title: 'Mean', width: 58, isNumber: true },
+          { title: 'RMS', width: 58, isNumber: true },
+          { title: 'Peak', width: 58, isNumber: true },
+          { title: 'Voltage', width: 58, isNumber: true },
         ]}
         rows={[
           row('Inductor', point.inductorCurrent, '–'),

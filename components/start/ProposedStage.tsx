@@ -7,6 +7,7 @@ import { space } from '@/constants/theme'
 import { formatQuantity, UNITS, type Unit } from '@/converters/quantities'
 import { draftStore } from '@/hooks/draft/store'
 import { fieldSpec, isEntry } from '@/hooks/draft/fields'
+import { pathOf } from '@/hooks/api'
 import { formatEntry } from '@/hooks/draft/entries'
 import { useTheme } from '@/hooks/useTheme'
 import type { StageProposal } from '@/server/contract/stageProposals'
@@ -22,16 +23,18 @@ export function ProposedStage({ proposal }: { readonly proposal: StageProposal }
   return (
     <Card title="Proposed power stage">
       <View role="list" aria-label="Proposed values">
-        {proposal.choices.map(({ field, value, unit, reason }, index) => (
+        {byReason(proposal.choices).map(({ reason, choices }, index) => (
           <View
-            key={field}
+            key={reason}
             role="listitem"
             style={[styles.row, index > 0 && { borderTopWidth: 1, borderTopColor: theme.rule }]}
           >
-            <View style={styles.line}>
-              <Text variant="strong">{isEntry(field) ? fieldSpec(field).label : field}</Text>
-              <Text variant="value">{written(value, unit)}</Text>
-            </View>
+            {choices.map(({ field, value, unit }) => (
+              <View key={field} style={styles.line}>
+                <Text variant="strong">{nameOf(field)}</Text>
+                <Text variant="value">{written(value, unit)}</Text>
+              </View>
+            ))}
             <Text variant="small" tone="quiet">
               {reason}
             </Text>
@@ -43,6 +46,19 @@ export function ProposedStage({ proposal }: { readonly proposal: StageProposal }
       </View>
     </Card>
   )
+}
+
+type StageChoices = StageProposal['choices']
+
+/** Values that were chosen together stand together, with their reason once. */
+function byReason(choices: StageChoices): { reason: string; choices: StageChoices }[] {
+  const reasons = [...new Set(choices.map((choice) => choice.reason))]
+  return reasons.map((reason) => ({ reason, choices: choices.filter((choice) => choice.reason === reason) }))
+}
+
+function nameOf(field: string): string {
+  const path = pathOf(field)
+  return isEntry(path) ? fieldSpec(path).label : field
 }
 
 function written(value: number, unit: string): string {

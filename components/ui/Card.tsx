@@ -2,6 +2,7 @@ import type { ReactNode } from 'react'
 import { StyleSheet, View } from 'react-native'
 import { Text } from './Text'
 import { space } from '@/constants/theme'
+import { useLayout } from '@/hooks/useLayout'
 import { useTheme } from '@/hooks/useTheme'
 
 export interface CardProps {
@@ -14,11 +15,15 @@ export interface CardProps {
 /** A sheet of paper with a heading: one part of a screen. */
 export function Card({ title, action, children }: CardProps) {
   const theme = useTheme()
+  const { isWide } = useLayout()
   return (
     <View
       role={title ? 'region' : undefined}
       aria-label={title}
-      style={[styles.card, { backgroundColor: theme.sheet, borderColor: theme.rule }]}
+      style={[
+        styles.card,
+        { padding: isWide ? space.lg : space.md, backgroundColor: theme.sheet, borderColor: theme.rule },
+      ]}
     >
       {title ? (
         <View style={styles.head}>
@@ -36,7 +41,7 @@ export function Card({ title, action, children }: CardProps) {
 }
 
 const styles = StyleSheet.create({
-  card: { borderWidth: 1, borderRadius: 8, padding: space.lg, gap: space.md },
+  card: { borderWidth: 1, borderRadius: 8, gap: space.md },
   head: { flexDirection: 'row', alignItems: 'center', gap: space.sm, flexWrap: 'wrap' },
   title: { flexGrow: 1, flexShrink: 1 },
 })

@@ -1,4 +1,4 @@
-import { useId, useRef } from 'react'
+import { useId, useState } from 'react'
 import { Pressable, StyleSheet, View } from 'react-native'
 import { onKey } from './keys'
 import { Text } from './Text'
@@ -18,14 +18,14 @@ export interface ChoiceProps<T extends string> {
 export function Choice<T extends string>({ label, value, options, onChange, isLabelHidden }: ChoiceProps<T>) {
   const theme = useTheme()
   const id = useId()
-  const items = useRef<(View | null)[]>([])
+  const [items] = useState(() => new Map<number, View>())
   const move = (by: number) => {
     const at = options.findIndex((option) => option.value === value)
     const next = (at + by + options.length) % options.length
     const chosen = options[next]
     if (!chosen) return
     onChange(chosen.value)
-    items.current[next]?.focus()
+    items.get(next)?.focus()
   }
   return (
     <View style={styles.group}>
@@ -51,7 +51,7 @@ export function Choice<T extends string>({ label, value, options, onChange, isLa
             <Pressable
               key={option.value}
               ref={(item) => {
-                items.current[index] = item
+                if (item) items.set(index, item)
               }}
               role="radio"
               aria-checked={isChosen}

@@ -67,7 +67,7 @@ export function Field(props: FieldProps) {
 }
 
 const styles = StyleSheet.create({
-  field: { gap: space.xs, flexGrow: 1, flexShrink: 1, flexBasis: 150, minWidth: 130 },
+  field: { gap: space.xs, width: '100%' },
   input: {
     height: TARGET,
     width: '100%',

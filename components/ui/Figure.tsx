@@ -10,20 +10,22 @@ const MARKS: Readonly<Record<Verdict, string>> = { holds: '✓', tight: '▲', s
 export interface FigureProps {
   readonly label: string
   readonly value: string
+  /** The value is a word, not a number. */
+  readonly isWord?: boolean
   readonly verdict?: Verdict | undefined
   /** Below the figure, in a few words: under which conditions, or against which aim. */
   readonly note?: string | undefined
 }
 
 /** One figure with its unit, and whether it holds. */
-export function Figure({ label, value, verdict, note }: FigureProps) {
+export function Figure({ label, value, isWord, verdict, note }: FigureProps) {
   return (
     <View style={styles.figure} role="group" aria-label={label}>
       <Text variant="label" tone="quiet">
         {label}
       </Text>
       <View style={styles.line}>
-        <Text variant="figure" lines={1}>
+        <Text variant={isWord ? 'heading' : 'figure'} lines={1} style={isWord && styles.word}>
           {value}
         </Text>
         {verdict ? <VerdictWord verdict={verdict} /> : null}
@@ -47,5 +49,6 @@ export function VerdictWord({ verdict }: { readonly verdict: Verdict }) {
 
 const styles = StyleSheet.create({
   figure: { gap: 2, paddingVertical: space.xs },
+  word: { lineHeight: 28 },
   line: { flexDirection: 'row', alignItems: 'baseline', flexWrap: 'nowrap', gap: space.sm },
 })

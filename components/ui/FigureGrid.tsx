@@ -19,5 +19,5 @@ export function FigureGrid({ least = 160, children }: { readonly least?: number;
 
 const styles = StyleSheet.create({
   grid: { flexDirection: 'row', flexWrap: 'wrap', gap: 1, borderWidth: 1, borderRadius: 8, overflow: 'hidden' },
-  cell: { flexGrow: 1, paddingHorizontal: space.lg, paddingVertical: space.xs },
+  cell: { flexGrow: 1, paddingHorizontal: space.md, paddingVertical: space.xs },
 })

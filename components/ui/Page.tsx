@@ -22,12 +22,11 @@ export function Page({ title, actions, children }: PageProps) {
       <Head>
         <title>{`${title} · Steadrail`}</title>
       </Head>
-      <View
-        role="banner"
-        style={[styles.head, { borderBottomColor: theme.rule, paddingHorizontal: isWide ? 48 : space.lg }]}
-      >
-        <Wordmark />
-        <View style={styles.actions}>{actions}</View>
+      <View role="banner" style={[styles.head, { borderBottomColor: theme.rule }]}>
+        <View style={[styles.headRow, { paddingHorizontal: isWide ? 48 : space.lg }]}>
+          <Wordmark />
+          <View style={styles.actions}>{actions}</View>
+        </View>
       </View>
       <View role="main" style={[styles.main, { padding: isWide ? 48 : space.lg }]}>
         {children}
@@ -39,12 +38,14 @@ export function Page({ title, actions, children }: PageProps) {
 const styles = StyleSheet.create({
   page: { flex: 1 },
   content: { flexGrow: 1 },
-  head: {
+  head: { borderBottomWidth: 1, alignItems: 'center' },
+  headRow: {
+    width: '100%',
+    maxWidth: 1280,
     minHeight: 60,
     flexDirection: 'row',
     alignItems: 'center',
     justifyContent: 'space-between',
-    borderBottomWidth: 1,
   },
   actions: { flexDirection: 'row', gap: space.sm },
   main: { width: '100%', maxWidth: 1280, alignSelf: 'center', gap: space.xl },

@@ -65,7 +65,7 @@ export function Select<T extends string>({ label, value, options, onChange }: Se
 }
 
 const styles = StyleSheet.create({
-  field: { gap: space.xs, flexGrow: 1, flexShrink: 1, flexBasis: 120, minWidth: 110 },
+  field: { gap: space.xs, width: '100%' },
   trigger: {
     height: TARGET,
     flexDirection: 'row',

@@ -69,6 +69,6 @@ const styles = StyleSheet.create({
   frame: { flexGrow: 1 },
   table: { flexGrow: 1 },
   row: { flexDirection: 'row', borderBottomWidth: 1, minHeight: 36, alignItems: 'center' },
-  cell: { paddingRight: space.md, paddingVertical: space.xs },
+  cell: { paddingRight: 6, paddingVertical: space.xs },
   right: { textAlign: 'right' },
 })

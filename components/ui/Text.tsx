@@ -20,7 +20,7 @@ const variants = StyleSheet.create({
   labelStrong: { fontFamily: fonts.labelStrong, fontSize: 14.5, lineHeight: 19 },
   value: { fontFamily: fonts.value, fontSize: sizes.body, lineHeight: 23 },
   smallValue: { fontFamily: fonts.value, fontSize: sizes.small, lineHeight: 19 },
-  figure: { fontFamily: fonts.value, fontSize: sizes.heading, lineHeight: 29 },
+  figure: { fontFamily: fonts.value, fontSize: 20, lineHeight: 28 },
 })
 
 export interface TextProps {
