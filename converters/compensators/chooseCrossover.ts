@@ -1,13 +1,13 @@
 /** Which crossover and type to suggest: the highest at which every corner holds, or the reason why there is none. */
 import type { CompensatorType } from '../document'
 import { formatQuantity } from '../quantities'
-import type { CrossoverWindow } from '../results'
+import type { CrossoverWindow, PartValues } from '../results'
 import { attemptKFactor, boostFor, goalAt, typeFor, type Attempt, type Goal } from './attempts'
 import type { CornerPlants } from './cornerPlants'
 import { LARGEST_BOOST } from './kFactor'
 import type { CompensatorOptions } from './options'
 import { attemptPlaced } from './placed'
-import { isBuildable } from './sizing'
+import { isBuildable, partsBeyond } from './sizing'
 import { rightHalfPlaneZero } from '../plant'
 
 export interface ChoiceRequest {
@@ -35,6 +35,10 @@ const STEPS_PER_DECADE = 24
 /** The window's lower end may lie decades down; nobody wants a crossover that far below its upper end. */
 const SEARCHED_DECADES = 1.3
 const SLOW_DECADES = 3
+/** Share of the margin targets that ten times the crossover is worth where not all targets can hold. */
+const SLACK_PER_DECADE = 0.2
+/** What rounding to preferred values may move the crossover by. */
+const ROUNDING_ROOM = 0.97
 /** With this share of the targets still held, a crossover in the window is better than a slow integrator. */
 const TOLERABLE_SLACK = -0.4
 
@@ -77,8 +81,8 @@ function takeWanted(request: ChoiceRequest, wanted: number): Choice {
 }
 
 function search(request: ChoiceRequest): Choice {
-  const { plants, window, type } = request
-  const inWindow = window.lower < window.upper ? bestBetween(request, window.lower, window.upper) : null
+  const { type, limits } = request
+  const inWindow = bestBetween(request, (parts) => isBuildable(parts, limits))
   const slack = inWindow ? inWindow[0].slack : -Infinity
   if (inWindow && slack >= 0) return { kind: 'choice', attempts: inWindow, how: 'highest' }
   const slow = type === null || type === 'I' ? slowIntegrator(request) : null
@@ -87,13 +91,23 @@ function search(request: ChoiceRequest): Choice {
     // The slow loop that holds is shown too: it may be what the designer can live with.
     return { kind: 'choice', attempts: slow ? [...inWindow, slow] : inWindow, how: 'nearest' }
   }
+  return refusal(whyNothing(request))
+}
+
+function whyNothing(request: ChoiceRequest): string {
+  const { plants, window, type, limits } = request
   const { phaseMargin, gainMargin } = plants.design.targets
   const which = type === null ? 'No network of type I, II or III' : `No network of type ${type}`
-  const bounds =
-    window.lower < window.upper ? '' : ` The window is empty: ${window.bounds.map(({ text }) => text).join(' ')}`
-  return refusal(
-    `${which} that can be built keeps ${phaseMargin}° and ${gainMargin} dB, or comes near, at every corner of line and load.${bounds}`,
-  )
+  const none = `${which} that can be built keeps ${phaseMargin}° and ${gainMargin} dB, or comes near, at every corner of line and load.`
+  const bounds = window.bounds.map(({ text }) => text).join(' ')
+  if (window.lower >= window.upper) return `${none} The window is empty: ${bounds}`
+  const unlimited = bestBetween(request, () => true)?.[0]
+  if (!unlimited || unlimited.slack < TOLERABLE_SLACK) return `${none} These bound the crossover: ${bounds}`
+  const { type: found, parts } = unlimited.ideal
+  const needs = partsBeyond(parts, limits)
+    .map(([part, value]) => `${part} = ${formatQuantity(value, part.startsWith('R') ? 'Ω' : 'F')}`)
+    .join(', ')
+  return `${none} Type ${found} at ${hertz(unlimited.goal.omega / TAU)} would, but with parts outside the size limits: ${needs}. Allow them, or change the upper divider resistor or the ramp.`
 }
 
 /** Both methods at one crossover, the better first: a K-factor network that holds, or the one with more slack. */
@@ -109,21 +123,28 @@ function bothMethods(request: ChoiceRequest, goal: Goal): [Attempt, ...Attempt[]
 }
 
 /** From the top of the window down: the first crossover at which all corners hold and stay inside, else the nearest. */
-function bestBetween(request: ChoiceRequest, lower: number, upper: number): [Attempt, ...Attempt[]] | null {
-  const { plants, limits } = request
+function bestBetween(
+  request: ChoiceRequest,
+  isAllowed: (parts: PartValues) => boolean,
+): [Attempt, ...Attempt[]] | null {
+  const { plants, window } = request
+  if (window.lower >= window.upper) return null
+  const lowest = Math.max(window.lower, window.upper / 10 ** SEARCHED_DECADES)
+  const fastest = ROUNDING_ROOM * TAU * window.upper
   let nearest: [Attempt, ...Attempt[]] | null = null
-  for (const frequency of descending(upper, Math.max(lower, upper / 10 ** SEARCHED_DECADES))) {
-    const attempts = bothMethods(request, goalAt(plants, TAU * frequency))
-    if (!attempts) continue
-    const [best, ...others] = attempts.filter(
-      ({ ideal, highestCrossover }) => highestCrossover <= TAU * upper && isBuildable(ideal.parts, limits),
+  for (const frequency of descending(window.upper, lowest)) {
+    const [best, ...others] = (bothMethods(request, goalAt(plants, TAU * frequency)) ?? []).filter(
+      ({ ideal, highestCrossover }) => highestCrossover <= fastest && isAllowed(ideal.parts),
     )
     if (!best) continue
-    if (nearest === null || best.slack > nearest[0].slack) nearest = [best, ...others]
+    if (nearest === null || worth(best) > worth(nearest[0])) nearest = [best, ...others]
     if (best.slack >= 0) break
   }
   return nearest
 }
+
+/** Margin is dear, but not dearer than any bandwidth. */
+const worth = ({ slack, goal }: Attempt): number => slack + SLACK_PER_DECADE * Math.log10(goal.omega)
 
 /** An integrator so slow that even the resonance's peak stays below the gain margin. */
 function slowIntegrator(request: ChoiceRequest): Attempt | null {

@@ -68,7 +68,8 @@ function readCorner(omegas: Float64Array, gains: readonly Complex[], corner: Cor
         const angle = Math.atan2(beforeIm, beforeRe)
         const turn = Math.atan2(im * beforeRe - re * beforeIm, re * beforeRe + im * beforeIm)
         const margin = wrapDeg(180 + ((angle + share * turn) * 180) / Math.PI)
-        phaseMargin = Math.min(phaseMargin ?? Infinity, margin)
+        // Of several crossings the nearest to −180° counts, from whichever side.
+        phaseMargin = Math.min(phaseMargin ?? Infinity, Math.abs(margin))
         crossover = Math.max(crossover, omegas[i - 1]! * (omegas[i]! / omegas[i - 1]!) ** share)
       }
       if (beforeIm < 0 !== im < 0) {
@@ -83,7 +84,8 @@ function readCorner(omegas: Float64Array, gains: readonly Complex[], corner: Cor
     beforeIm = im
     beforeLog = log
   }
-  const isStable = unstablePoles(corner) + 2 * encirclements === 0
+  // Gain left at half the switching frequency meets its own sampled image there.
+  const isStable = beforeLog < 0 && unstablePoles(corner) + 2 * encirclements === 0
   return { phaseMargin, gainMargin, crossover, isStable }
 }
 

@@ -138,12 +138,13 @@ export function shortfalls(
   const unstable = read.filter((corner) => !corner.isStable)
   if (unstable.length > 0) return [`The loop is unstable at ${unstable.map(at).join(', ')}.`]
   const { targets } = plants.design
-  return [
+  const found = [
     short(read, (corner) => corner.phaseMargin, targets.phaseMargin, 'phase margin', degrees),
     short(read, (corner) => corner.gainMargin, targets.gainMargin, 'gain margin', decibels),
     aboveWindow(read, window),
-    ...limitedParts(ideal, preferred, options),
   ].filter((sentence) => sentence !== null)
+  // A part at its limit is worth a word only where something is missing for it.
+  return found.length > 0 ? [...found, ...limitedParts(ideal, preferred, options)] : []
 }
 
 function short(

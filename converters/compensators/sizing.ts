@@ -13,13 +13,19 @@ type Limits = CompensatorOptions['limits']
 
 /** A part this factor beyond a size limit is taken at the limit without much harm. */
 const NEAR_ENOUGH = 1.2
-/** R1 sets the divider's current, so it is not moved further than this. Common practice, no source. */
-const UPPER_RESISTANCE = { least: 1e3, most: 220e3 }
+/** A, through the divider: enough beside an amplifier's bias, not so much that it heats. Common practice, no source. */
+const DIVIDER_CURRENT = { least: 20e-6, most: 2e-3 }
 
 /** Whether every part can have nearly its computed value; a C2 that is too small is left out. */
-export function isBuildable(parts: PartValues, limits: Limits): boolean {
-  const { least, most } = scaleRange(parts, limits)
-  return least <= NEAR_ENOUGH && most >= 1 / NEAR_ENOUGH
+export const isBuildable = (parts: PartValues, limits: Limits): boolean => partsBeyond(parts, limits).length === 0
+
+/** The parts that the limits keep away from their computed values. */
+export function partsBeyond(parts: PartValues, limits: Limits): [CompensatorPart, number][] {
+  return entriesOf(parts).filter(([part, value]) => {
+    if (part === 'R1') return false
+    const { least, most } = scaleRange({ [part]: value }, limits)
+    return least > NEAR_ENOUGH || most < 1 / NEAR_ENOUGH
+  })
 }
 
 /**
@@ -37,10 +43,10 @@ export function sizeAttempt(
   const { least, most } = scaleRange(ideal.parts, limits)
   if ((least <= 1 && most >= 1) || least > most) return attempt
   const R1 = ideal.parts.R1!
-  const allowed = resistors.filter(
-    (value) =>
-      value >= Math.max(least * R1, UPPER_RESISTANCE.least) && value <= Math.min(most * R1, UPPER_RESISTANCE.most),
-  )
+  const { voltage } = plants.design.output
+  const lowest = Math.max(least * R1, voltage / DIVIDER_CURRENT.most)
+  const highest = Math.min(most * R1, voltage / DIVIDER_CURRENT.least)
+  const allowed = resistors.filter((value) => value >= lowest && value <= highest)
   if (allowed.length === 0) return attempt
   const moved = least > 1 ? allowed[0]! : allowed.at(-1)!
   const parts = scaledParts(ideal.parts, moved / R1)
@@ -65,9 +71,6 @@ function scaleRange(parts: PartValues, limits: Limits): { readonly least: number
 }
 
 const scaledParts = (parts: PartValues, k: number): PartValues =>
-  Object.fromEntries(
-    (Object.entries(parts) as [CompensatorPart, number][]).map(([part, value]) => [
-      part,
-      part.startsWith('R') ? value * k : value / k,
-    ]),
-  )
+  Object.fromEntries(entriesOf(parts).map(([part, value]) => [part, part.startsWith('R') ? value * k : value / k]))
+
+const entriesOf = (parts: PartValues) => Object.entries(parts) as [CompensatorPart, number][]

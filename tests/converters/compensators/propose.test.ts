@@ -175,6 +175,38 @@ describe('a 5 V to 24 V boost in peak current mode', () => {
   })
 })
 
+describe('a voltage-mode boost with a diode', () => {
+  const design: DesignDocumentInput = {
+    ...sensorBoost,
+    modulator: { kind: 'voltage-mode', rampAmplitude: 1 },
+    amplifier: { kind: 'op-amp' },
+  }
+
+  it('gets what can be built, by moving R1 where the parts would be too small or too large', () => {
+    const { proposals, suggestion } = proposeCompensator(design)
+    expect(suggestion?.type).toBe('III')
+    const { R1, R2, R3, C1 } = proposals[0]!.parts.preferred
+    expect(R1).toBeGreaterThan(10e3)
+    for (const resistor of [R2, R3]) expect(resistor).toBeGreaterThanOrEqual(100)
+    expect(C1).toBeLessThanOrEqual(10e-6)
+    expect(proposals[0]!.reasons.join(' ')).toMatch(/R1 goes from 10\.0 kΩ/)
+  })
+
+  it('with R1 fixed gets the nearest that there is, with what is short and where', () => {
+    const fixed: DesignDocumentInput = { ...design, compensator: { type: 'III', parts: { R1: 33e3 } } }
+    const { proposals, suggestion } = proposeCompensator(fixed)
+    expect(suggestion?.reasons[0]).toMatch(/No crossover in the window holds/)
+    expect(proposals[0]?.shortfalls[0]).toMatch(/At .* V and 20\.0 mA the phase margin is/)
+    expect(proposals[0]?.margins.preferred.worst.isStable).toBe(true)
+  })
+
+  it('is refused with the part that is in the way when the size limits leave nothing', () => {
+    const fixed: DesignDocumentInput = { ...design, compensator: { type: 'III', parts: { R1: 10e3 } } }
+    const { refusal } = proposeCompensator(fixed, { limits: { smallestResistance: 5e3 } })
+    expect(refusal).toMatch(/would, but with parts outside the size limits: R2 = [\d.]+ Ω/)
+  })
+})
+
 describe('what was asked for', () => {
   it('a boost that no network has is refused with the figures', () => {
     const { refusal } = proposeCompensator(
