@@ -44,7 +44,8 @@ export function analyseDesign(design: DesignDocument, options: AnalysisOptions =
   const loop = network && closed && describeLoop(network, closed, frequencies, raw)
   const margins = network && marginsOf(plant, network, 'switched')
   const averagedMargins = network && marginsOf(plant, network, 'averaged')
-  const isStable = margins?.isStable === true && plant.periodMap.isStable
+  // The steps come from the averaged model, so it has to settle too.
+  const settles = plant.periodMap.isStable && loop?.closedLoopPoles.every((pole) => pole.halfPlane === 'left')
   const analysis: Omit<Analysis, 'warnings'> = {
     engineVersion: ENGINE_VERSION,
     operatingPoint,
@@ -59,7 +60,7 @@ export function analyseDesign(design: DesignDocument, options: AnalysisOptions =
     loop,
     margins,
     averagedMargins,
-    steps: closed && isStable ? stepsOf(design, closed) : null,
+    steps: closed && settles && margins?.isStable ? stepsOf(design, closed) : null,
   }
   return { ...analysis, warnings: warningsFor(design, analysis, rightHalfPlaneZero(plant.zeros)) }
 }

@@ -7,7 +7,9 @@ const BOOK = 'Erickson and Maksimović 2001'
 const toHertz = (omega: number): number => omega / (2 * Math.PI)
 
 export function closedForms(plant: OpenPlant): ClosedForm[] {
-  return [...esrZeros(plant), ...(plant.stage ? continuousForms(plant) : discontinuousForms(plant))]
+  const forms = [...esrZeros(plant), ...(plant.stage ? continuousForms(plant) : discontinuousForms(plant))]
+  // With its losses a stage may sit where the ideal one cannot; its closed form is then left out.
+  return forms.filter(({ value }) => Number.isFinite(value))
 }
 
 function esrZeros({ circuit }: OpenPlant): ClosedForm[] {

@@ -1,6 +1,7 @@
 /** Figures of the steady state, read off the orbit. */
 import { MEASURES, type Circuit } from './circuit'
 import { averageStage } from './averaged/continuous'
+import { DesignError } from './errors'
 import type { CurrentFigures, OperatingPoint } from './results'
 import { exponential } from './numeric/exponential'
 import { flatten } from './numeric/linearSystem'
@@ -130,8 +131,8 @@ function boundaryCurrent(circuit: Circuit): number | null {
   let current = circuit.outputCurrent
   for (let step = 0; step < 6; step++) {
     const here = step === 0 ? circuit : buildCircuit(circuit.design, circuit.lineVoltage, current)
-    const orbit = findContinuousOrbit(here, true)
-    if (!orbit) return null
+    const orbit = findContinuousOrbit(here)
+    if (orbit instanceof DesignError) return null
     const off = orbit.segments[1]!
     const valley = read(off.interval, MEASURES.rectifierCurrent, off.end, here.inputs)
     const middle = dot(rectifierRow(here), averageStage(here, orbit.dutyCycle).rest)

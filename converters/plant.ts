@@ -5,6 +5,7 @@ import { discontinuousModel } from './averaged/discontinuous'
 import { column, CONTROL, modelResponses, type LinearModel } from './averaged/linearModel'
 import { buildCircuit, type Circuit } from './circuit'
 import type { DesignDocument } from './document'
+import { DesignError } from './errors'
 import type { Complex } from './numeric/complex'
 import { eigenvalues, invariantZeros } from './numeric/eigen'
 import type { PeriodMap, Root, RootRole } from './results'
@@ -33,6 +34,19 @@ export interface OpenPlant {
 
 /** @throws DesignError when the point cannot be reached or computed. */
 export function openPlant(design: DesignDocument, point: PlantPoint): OpenPlant {
+  try {
+    return open(design, point)
+  } catch (cause) {
+    if (!(cause instanceof RangeError)) throw cause
+    throw new DesignError(
+      'no-operating-point',
+      `At ${point.lineVoltage} V and ${point.outputCurrent} A the figures leave the range of numbers: some part is far from all others in size.`,
+      [],
+    )
+  }
+}
+
+function open(design: DesignDocument, point: PlantPoint): OpenPlant {
   const circuit = buildCircuit(design, point.lineVoltage, point.outputCurrent)
   const orbit = findOrbit(circuit)
   const stage = orbit.conduction === 'continuous' ? averageStage(circuit, orbit.dutyCycle) : null
@@ -60,7 +74,7 @@ function averagedModel(circuit: Circuit, orbit: Orbit, stage: AveragedStage | nu
   return currentModeModel(circuit, stage, orbit.dutyCycle)
 }
 
-/** Mean of each state over the orbit, ramps taken as straight: close enough to start Newton from. */
+/** Mean of each state over the orbit, ramps taken as straight. */
 function meanState(circuit: Circuit, orbit: Orbit): Float64Array {
   return Float64Array.from(circuit.states, (_, i) =>
     orbit.segments.reduce((sum, segment, k) => {

@@ -8,8 +8,6 @@
  * conduction mode", IEEE Trans. Power Electronics 2001 (the correction of the mean current).
  */
 import { MEASURES, type Circuit, type Interval } from '../circuit'
-import { DesignError } from '../errors'
-import { flatten, solveReal } from '../numeric/linearSystem'
 import { derivative, dot, read } from '../switched/flow'
 import type { LinearModel } from './linearModel'
 
@@ -22,18 +20,18 @@ interface Averages {
 const STEP = 1e-5
 
 /**
+ * Linearised about the mean of the orbit, which is the rest point of the averaged equations up to the ripple that they
+ * leave out.
  * @param dutyCycle - of the switch.
- * @param guess - mean state to start from.
- * @throws DesignError 'no-operating-point' if the averaged equations have no rest point near the guess.
+ * @param rest - mean state of the orbit.
  */
-export function discontinuousModel(circuit: Circuit, dutyCycle: number, guess: Float64Array): LinearModel {
-  const rest = settle(circuit, dutyCycle, guess)
+export function discontinuousModel(circuit: Circuit, dutyCycle: number, rest: Float64Array): LinearModel {
   const control = controlFor(circuit, rest, circuit.inputs, dutyCycle)
   const n = rest.length
   const at = (x: ArrayLike<number>, inputs: readonly number[], v: number) =>
     averages(circuit, x, inputs, dutyFor(circuit, x, inputs, v))
   const slope = (size: number, evaluate: (offset: number) => Averages) => {
-    const step = STEP * Math.max(Math.abs(size), 1e-3)
+    const step = STEP * Math.max(Math.abs(size), 1e-6)
     const above = evaluate(step)
     const below = evaluate(-step)
     return {
@@ -107,30 +105,4 @@ function comparatorSpan(circuit: Circuit, x: ArrayLike<number>, inputs: readonly
   if (modulator.kind === 'voltage-mode') return modulator.rampAmplitude
   const sensed = circuit.on.C[MEASURES.switchCurrent]![circuit.stoppingState]! * modulator.currentSenseResistance
   return (sensed * risingSlope(circuit, x, inputs) + modulator.slopeCompensation) * circuit.period
-}
-
-/** Newton on the averaged equations with the duty held. */
-function settle(circuit: Circuit, duty: number, guess: Float64Array): Float64Array {
-  let x = Float64Array.from(guess)
-  const n = x.length
-  for (let step = 0; step < 40; step++) {
-    const here = averages(circuit, x, circuit.inputs, duty).derivatives
-    const jacobian = Array.from({ length: n }, () => new Array<number>(n).fill(0))
-    for (let j = 0; j < n; j++) {
-      const size = STEP * Math.max(Math.abs(x[j]!), 1e-3)
-      const above = averages(circuit, moved(x, j, size), circuit.inputs, duty).derivatives
-      const below = averages(circuit, moved(x, j, -size), circuit.inputs, duty).derivatives
-      for (let i = 0; i < n; i++) jacobian[i]![j] = (above[i]! - below[i]!) / (2 * size)
-    }
-    const change = Float64Array.from(here, (value) => -value)
-    if (!solveReal(flatten(jacobian), n, change, 1)) break
-    x = x.map((value, i) => value + change[i]!)
-    if (!x.every(Number.isFinite)) break
-    if (change.every((value, i) => Math.abs(value) <= 1e-11 * Math.max(Math.abs(x[i]!), 1e-6))) return x
-  }
-  throw DesignError.at(
-    'no-operating-point',
-    'output.currentMinimum',
-    'The averaged equations of discontinuous conduction have no rest point here; the load may be far below what they describe.',
-  )
 }

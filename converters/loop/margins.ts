@@ -19,6 +19,7 @@ const PER_DECADE = 40
 const LOWEST_SHARE = 1e-6 // of the switching frequency
 
 interface Sample {
+  readonly logOmega: number
   readonly omega: number
   readonly gain: Complex
   readonly logGain: number
@@ -35,9 +36,11 @@ export function readMargins(loopGain: LoopGain, switchingFrequency: number, opti
   const rising = phaseCrossings.filter(({ margin }) => margin > 0).map(({ margin }) => margin)
   const falling = phaseCrossings.filter(({ margin }) => margin < 0).map(({ margin }) => -margin)
   const phaseMargins = gainCrossings.map(({ margin }) => margin)
+  // Gain left at half the switching frequency meets its own sampled image there.
+  const isStable = samples.at(-1)!.logGain < 0 && unstableClosedLoopPoles(samples, options.unstablePoles ?? 0) === 0
   return {
     crossover: gainCrossings.at(-1)?.frequency ?? null,
-    phaseMargin: phaseMargins.length > 0 ? Math.min(...phaseMargins) : null,
+    phaseMargin: smallestPhaseMargin(phaseMargins, isStable),
     gainMargin: rising.length > 0 ? Math.min(...rising) : null,
     gainReductionMargin: falling.length > 0 ? Math.min(...falling) : null,
     modulusMargin: closest.distance,
@@ -46,8 +49,14 @@ export function readMargins(loopGain: LoopGain, switchingFrequency: number, opti
     delayMargin: delayMargin(gainCrossings),
     gainCrossings,
     phaseCrossings,
-    isStable: unstableClosedLoopPoles(samples, options.unstablePoles ?? 0) === 0,
+    isStable,
   }
+}
+
+/** A stable loop may cross with its phase ahead of 0°: then −180° is near from the other side, and only size counts. */
+function smallestPhaseMargin(margins: readonly number[], isStable: boolean): number | null {
+  if (margins.length === 0) return null
+  return isStable ? Math.min(...margins.map(Math.abs)) : Math.min(...margins)
 }
 
 function sampleLoop(loopGain: LoopGain, switchingFrequency: number, landmarks: readonly number[]): Sample[] {
@@ -63,11 +72,13 @@ function sampleLoop(loopGain: LoopGain, switchingFrequency: number, landmarks: r
   let phase = 0
   for (const frequency of frequencies) {
     if (!(frequency >= lowest && frequency <= highest)) continue
-    const omega = 2 * Math.PI * frequency
+    // The searches between two samples run over log ω; both must see the very same value at the ends.
+    const logOmega = Math.log(2 * Math.PI * frequency)
+    const omega = Math.exp(logOmega)
     const gain = loopGain(omega)
     const principal = argumentDeg(gain)
     phase = samples.length === 0 ? principal : phase + wrap(principal - phase)
-    samples.push({ omega, gain, logGain: Math.log(modulus(gain)), phase })
+    samples.push({ logOmega, omega, gain, logGain: Math.log(modulus(gain)), phase })
   }
   return samples
 }
@@ -84,7 +95,7 @@ function findGainCrossings(loopGain: LoopGain, samples: readonly Sample[]): Cros
   for (let i = 1; i < samples.length; i++) {
     const [a, b] = [samples[i - 1]!, samples[i]!]
     if (a.logGain > 0 === b.logGain > 0) continue
-    const omega = rootInLog(a.omega, b.omega, (w) => Math.log(modulus(loopGain(w))))
+    const omega = rootInLog(a, b, (w) => Math.log(modulus(loopGain(w))))
     const gain = loopGain(omega)
     crossings.push(crossingAt(omega, gain, wrap(180 + argumentDeg(gain))))
   }
@@ -99,15 +110,15 @@ function findPhaseCrossings(loopGain: LoopGain, samples: readonly Sample[]): Cro
     const before = Math.floor((a.phase - 180) / 360)
     const after = Math.floor((b.phase - 180) / 360)
     if (before === after) continue
-    const omega = rootInLog(a.omega, b.omega, (w) => wrap(argumentDeg(loopGain(w)) + 180))
+    const omega = rootInLog(a, b, (w) => wrap(argumentDeg(loopGain(w)) + 180))
     const gain = loopGain(omega)
     crossings.push(crossingAt(omega, gain, -decibels(gain)))
   }
   return crossings
 }
 
-const rootInLog = (low: number, high: number, f: (omega: number) => number): number =>
-  Math.exp(findRoot((logOmega) => f(Math.exp(logOmega)), Math.log(low), Math.log(high), 1e-12))
+const rootInLog = (low: Sample, high: Sample, f: (omega: number) => number): number =>
+  Math.exp(findRoot((logOmega) => f(Math.exp(logOmega)), low.logOmega, high.logOmega, 1e-12))
 
 const distanceToCritical = (gain: Complex): number => Math.hypot(1 + gain.re, gain.im)
 
@@ -117,8 +128,8 @@ function closestApproach(loopGain: LoopGain, samples: readonly Sample[]): { dist
   samples.forEach((sample, i) => {
     if (distanceToCritical(sample.gain) < distanceToCritical(samples[least]!.gain)) least = i
   })
-  let low = Math.log(samples[Math.max(0, least - 1)]!.omega)
-  let high = Math.log(samples[Math.min(samples.length - 1, least + 1)]!.omega)
+  let low = samples[Math.max(0, least - 1)]!.logOmega
+  let high = samples[Math.min(samples.length - 1, least + 1)]!.logOmega
   const golden = (Math.sqrt(5) - 1) / 2
   const distance = (logOmega: number) => distanceToCritical(loopGain(Math.exp(logOmega)))
   let left = high - golden * (high - low)
@@ -157,19 +168,17 @@ function delayMargin(crossings: readonly Crossing[]): number | null {
 
 /**
  * Nyquist's count on the sampled half: each half turn of 1 + T about the origin beyond the one that its start allows is
- * a closed-loop pole in the right half plane. An integrator starts near −90°, which counts as zero.
+ * a closed-loop pole in the right half plane. N integrators start the curve at −90°·N and are passed on the right by
+ * an arc that undoes it; the slope of the gain at the lowest frequencies tells how many there are.
  */
 function unstableClosedLoopPoles(samples: readonly Sample[], openLoopUnstable: number): number {
-  let angle = 0
-  let start = 0
-  samples.forEach(({ gain }, i) => {
-    const principal = argumentDeg({ re: 1 + gain.re, im: gain.im })
-    if (i === 0) {
-      angle = principal
-      start = Math.abs(principal) > 135 ? Math.sign(principal) * 180 : 0
-    } else {
-      angle += wrap(principal - angle)
-    }
-  })
-  return openLoopUnstable - Math.round((angle - start) / 180)
+  const [first, second] = [samples[0]!, samples[1]!]
+  const slope = (second.logGain - first.logGain) / Math.log(second.omega / first.omega)
+  const expected = -90 * Math.max(0, Math.round(-slope))
+  const angles = samples.map(({ gain }) => argumentDeg({ re: 1 + gain.re, im: gain.im }))
+  const offset = wrap(angles[0]! - expected)
+  const turned = angles.reduce((angle, principal) => angle + wrap(principal - angle), expected + offset)
+  // A loop gain that is negative at standstill starts half a turn away.
+  const start = Math.abs(offset) > 135 ? Math.sign(offset) * 180 : 0
+  return openLoopUnstable - Math.round((turned - start) / 180)
 }

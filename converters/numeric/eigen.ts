@@ -37,12 +37,17 @@ function balancingScale(A: readonly (readonly number[])[]): number[] {
   return scale
 }
 
-/** Eigenvalues of a real square matrix, conjugate pairs adjacent with the positive imaginary part first. */
+/**
+ * Eigenvalues of a real square matrix, conjugate pairs adjacent with the positive imaginary part first.
+ * @throws {RangeError} if an entry is not finite; the iteration would not end.
+ */
 export function eigenvalues(A: readonly (readonly number[])[]): Complex[] {
   const n = A.length
   if (n === 0) return []
   const scale = balancingScale(A)
   const balanced = new Matrix(A.map((row, i) => row.map((a, j) => (a * scale[j]!) / scale[i]!)))
+  if (!balanced.to1DArray().every(Number.isFinite))
+    throw new RangeError('a matrix with an infinite entry has no eigenvalues')
   const { realEigenvalues, imaginaryEigenvalues } = new EigenvalueDecomposition(balanced)
   return realEigenvalues.map((re, i) => ({ re, im: imaginaryEigenvalues[i]! }))
 }

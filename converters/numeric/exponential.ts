@@ -68,7 +68,7 @@ export function exponential(A: Float64Array, n: number, t: number): Float64Array
   return result
 }
 
-function identity(n: number, value: number): Float64Array {
+export function identity(n: number, value = 1): Float64Array<ArrayBuffer> {
   const matrix = new Float64Array(n * n)
   for (let i = 0; i < n; i++) matrix[i * n + i] = value
   return matrix

@@ -3,8 +3,8 @@
  * they allocate nothing.
  */
 
-/** Pivots below this share of the largest entry of the matrix mean that the system has no unique solution. */
-const SINGULAR = 1e-14
+/** With every row scaled to a largest entry of one, a pivot below this means that there is no unique solution. */
+const SINGULAR = 1e-15
 
 /**
  * Solves M·X = R in place by elimination with partial pivoting: `right` becomes X, `matrix` is destroyed.
@@ -13,8 +13,7 @@ const SINGULAR = 1e-14
  * @returns false if the matrix is singular to working precision.
  */
 export function solveReal(matrix: Float64Array, n: number, right: Float64Array, m: number): boolean {
-  let largest = 0
-  for (let i = 0; i < n * n; i++) largest = Math.max(largest, Math.abs(matrix[i]!))
+  for (let i = 0; i < n; i++) scaleRow(matrix, n, right, m, i)
   for (let k = 0; k < n; k++) {
     let pivotRow = k
     let best = Math.abs(matrix[k * n + k]!)
@@ -25,7 +24,7 @@ export function solveReal(matrix: Float64Array, n: number, right: Float64Array, 
         pivotRow = i
       }
     }
-    if (!(best > SINGULAR * largest)) return false
+    if (!(best > SINGULAR)) return false
     if (pivotRow !== k) {
       swapRows(matrix, n, k, pivotRow)
       swapRows(right, m, k, pivotRow)
@@ -47,6 +46,15 @@ export function solveReal(matrix: Float64Array, n: number, right: Float64Array, 
     }
   }
   return true
+}
+
+/** Divides an equation by its largest coefficient: volts, amperes and their rates stand in one system. */
+function scaleRow(matrix: Float64Array, n: number, right: Float64Array, m: number, row: number): void {
+  let largest = 0
+  for (let j = 0; j < n; j++) largest = Math.max(largest, Math.abs(matrix[row * n + j]!))
+  if (largest === 0) return
+  for (let j = 0; j < n; j++) matrix[row * n + j]! /= largest
+  for (let j = 0; j < m; j++) right[row * m + j]! /= largest
 }
 
 function swapRows(matrix: Float64Array, width: number, first: number, second: number): void {

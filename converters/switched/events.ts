@@ -7,6 +7,7 @@
  * circuits", IEEE Trans. Power Electronics 1986.
  */
 import { MEASURES, type Circuit, type Interval } from '../circuit'
+import { DesignError } from '../errors'
 import { derivative, dot, read } from './flow'
 import type { Orbit } from './orbit'
 
@@ -24,7 +25,10 @@ export interface SwitchingEvent {
   readonly outputStep: number
 }
 
-/** The events at the ends of all segments but the last, whose end is the clock's. */
+/**
+ * The events at the ends of all segments but the last, whose end is the clock's.
+ * @throws DesignError 'no-operating-point' if a surface is not crossed but only touched.
+ */
 export function eventsOf(circuit: Circuit, orbit: Orbit): SwitchingEvent[] {
   const { inputs } = circuit
   return orbit.segments.slice(0, -1).map((before, k) => {
@@ -32,11 +36,13 @@ export function eventsOf(circuit: Circuit, orbit: Orbit): SwitchingEvent[] {
     const fBefore = derivative(before.interval, before.end, inputs)
     const fAfter = derivative(after.interval, after.start, inputs)
     const surface = k === 0 ? comparatorSurface(circuit) : rectifierSurface(circuit.off)
+    const rate = surface.ownRate + dot(surface.stateGradient, fBefore)
+    if (k === 0 ? !(rate > 0) : !(rate < 0)) throw notCrossed(k === 0)
     return {
       stateGradient: surface.stateGradient,
       inputGradient: surface.inputGradient,
       control: k === 0 ? 1 : 0,
-      rate: surface.ownRate + dot(surface.stateGradient, fBefore),
+      rate,
       displacement: fBefore.map((value, i) => value - fAfter[i]!),
       outputStep:
         read(before.interval, MEASURES.outputVoltage, before.end, inputs) -
@@ -69,4 +75,18 @@ function rectifierSurface(off: Interval) {
     inputGradient: Float64Array.from(off.D[MEASURES.rectifierCurrent]!),
     ownRate: 0,
   }
+}
+
+function notCrossed(isComparator: boolean): DesignError {
+  return isComparator
+    ? DesignError.at(
+        'no-operating-point',
+        'modulator',
+        'The sensed current with its slope compensation does not rise where the switch should turn off, so no comparator can end the pulse there. Inductance and output capacitance may resonate near the switching frequency.',
+      )
+    : DesignError.at(
+        'no-operating-point',
+        'inductor.inductance',
+        'The rectifier current does not fall where it should reach zero. Inductance and output capacitance may resonate near the switching frequency.',
+      )
 }
