@@ -12,9 +12,10 @@ const folder = fileURLToPath(new URL('../docs/screenshots/', import.meta.url))
 const SIZES = { phone: PHONE, wide: WIDE } as const
 const SCHEMES = ['light', 'dark'] as const
 
-/** Once nothing is loading and fonts are there, the picture no longer changes. */
+/** Loads the screen afresh, so that it stands at its top; once nothing is loading, the picture no longer changes. */
 async function shoot(page: Page, name: string): Promise<void> {
-  await page.waitForLoadState('networkidle')
+  await page.reload({ waitUntil: 'networkidle' })
+  await page.waitForFunction(() => document.querySelector('[aria-busy="true"]') === null)
   await page.evaluate(() => document.fonts.ready)
   await page.screenshot({ path: `${folder}${name}.png`, animations: 'disabled' })
 }
