@@ -17,6 +17,9 @@ const USEFUL_BOOST: Readonly<Record<CompensatorType, number>> = { I: 0, II: 80, 
 /** Below this a zero and its pole nearly cancel, and the parts between them become absurd. */
 const LEAST_BOOST = 10
 
+/** Share of the targets that rounding to preferred values may take; with less in hand a network is not sure to hold. */
+const ROUNDING_SLACK = 0.02
+
 /** What nominal line and full load ask of the network at a crossover. */
 export interface Goal {
   readonly omega: number // rad/s
@@ -29,6 +32,9 @@ export interface Attempt extends QuickMargins {
   readonly goal: Goal
   readonly ideal: SynthesisedNetwork
 }
+
+/** Whether every corner meets the targets with some room for rounding. */
+export const holds = ({ slack }: QuickMargins): boolean => slack >= ROUNDING_SLACK
 
 export function goalAt(plants: CornerPlants, omega: number): Goal {
   const [nominal] = plants.corners
@@ -78,7 +84,7 @@ export function bestAttempt(makers: readonly (() => Attempt | null)[]): Attempt 
     const attempt = make()
     if (attempt === null) continue
     if (best === null || attempt.slack > best.slack) best = attempt
-    if (best.slack >= 0) break
+    if (holds(best)) break
   }
   return best
 }

@@ -2,7 +2,7 @@
 import type { CompensatorType } from '../document'
 import { formatQuantity } from '../quantities'
 import type { CrossoverWindow, PartValues } from '../results'
-import { attemptKFactor, boostFor, goalAt, typeFor, type Attempt, type Goal } from './attempts'
+import { attemptKFactor, boostFor, goalAt, holds, typeFor, type Attempt, type Goal } from './attempts'
 import type { CornerPlants } from './cornerPlants'
 import { LARGEST_BOOST } from './kFactor'
 import type { CompensatorOptions } from './options'
@@ -119,7 +119,7 @@ function bothMethods(request: ChoiceRequest, goal: Goal): [Attempt, ...Attempt[]
   const foundPlaced = attemptPlaced({ plants, upperResistance, goal, type: byFactor.ideal.type })
   if (!foundPlaced) return [byFactor]
   const placed = size(foundPlaced)
-  return byFactor.slack >= Math.min(placed.slack, 0) ? [byFactor, placed] : [placed, byFactor]
+  return holds(byFactor) || byFactor.slack >= placed.slack ? [byFactor, placed] : [placed, byFactor]
 }
 
 /** From the top of the window down: the first crossover at which all corners hold and stay inside, else the nearest. */
@@ -138,13 +138,14 @@ function bestBetween(
     )
     if (!best) continue
     if (nearest === null || worth(best) > worth(nearest[0])) nearest = [best, ...others]
-    if (best.slack >= 0) break
+    if (holds(best)) break
   }
   return nearest
 }
 
-/** Margin is dear, but not dearer than any bandwidth. */
-const worth = ({ slack, goal }: Attempt): number => slack + SLACK_PER_DECADE * Math.log10(goal.omega)
+/** Margin is dear, but where it is short anyway not dearer than any bandwidth. */
+const worth = ({ slack, goal }: Attempt): number =>
+  (slack >= 0 ? 1 : 0) + slack + SLACK_PER_DECADE * Math.log10(goal.omega)
 
 /** An integrator so slow that even the resonance's peak stays below the gain margin. */
 function slowIntegrator(request: ChoiceRequest): Attempt | null {
@@ -152,7 +153,7 @@ function slowIntegrator(request: ChoiceRequest): Attempt | null {
   const top = Math.min(window.lower || window.upper, window.upper)
   for (const frequency of descending(top, top / 10 ** SLOW_DECADES)) {
     const found = attemptKFactor({ ...request, type: 'I', goal: goalAt(plants, TAU * frequency) })
-    if (!found || found.slack < 0) continue
+    if (!found || !holds(found)) continue
     const attempt = size(found)
     if (isBuildable(attempt.ideal.parts, limits)) return attempt
   }

@@ -1,4 +1,5 @@
 /** Output capacitors from ripple voltage and load step: ceramics as far as they go, and a bulk bank beyond. */
+import { preferredValues } from '../compensators/preferredNumbers'
 import { DesignError } from '../errors'
 import { formatQuantity } from '../quantities'
 import type { DesignDocumentInput } from '../document'
@@ -41,8 +42,10 @@ export interface CapacitorProposal {
 export function chooseOutputCapacitors(requirements: StageRequirements, inductance: number): CapacitorProposal {
   const ripple = capacitanceForRipple(requirements, inductance)
   const step = capacitanceForStep(requirements, inductance)
-  const piece = CERAMICS.find(({ upTo }) => requirements.output.voltage <= upTo)!.capacitance
-  const needed = Math.ceil(Math.max(ripple.capacitance, step.capacitance) / piece)
+  const most = Math.max(ripple.capacitance, step.capacitance)
+  const largest = CERAMICS.find(({ upTo }) => requirements.output.voltage <= upTo)!.capacitance
+  const piece = most >= largest ? largest : preferredValues('E6', most, 10 * most)[0]!
+  const needed = Math.ceil(most / piece)
   const isAllCeramic = needed <= MOST_CERAMICS
   const count = isAllCeramic ? needed : Math.min(MOST_CERAMICS, Math.ceil(ripple.capacitance / piece))
   const ceramic: Bank = { count, capacitance: piece, esr: CERAMIC_ESR }
@@ -50,10 +53,10 @@ export function chooseOutputCapacitors(requirements: StageRequirements, inductan
   const choices = bankChoices(
     0,
     ceramic,
-    `${reasons} ${formatQuantity(piece, 'F')} is what remains of a common ceramic piece at this voltage; take the real figure from its data sheet.`,
+    `${reasons} ${formatQuantity(piece, 'F')} has to remain of each ceramic piece at this voltage; take the real figure from its data sheet.`,
   )
   if (isAllCeramic) return { banks: [ceramic], choices }
-  const bulk = bulkBank(requirements, Math.max(ripple.capacitance, step.capacitance) - count * piece)
+  const bulk = bulkBank(requirements, most - count * piece)
   const bulkReason = `${reasons} That is more than ${MOST_CERAMICS} ceramic pieces hold, so a bulk bank carries the rest.`
   return { banks: [ceramic, bulk], choices: [...choices, ...bankChoices(1, bulk, bulkReason)] }
 }
