@@ -5,6 +5,7 @@ import type { Root, RootRole } from '@/converters/results'
 export const ROLE_NAMES: Readonly<Record<RootRole, string>> = {
   'output-filter': 'output filter',
   'capacitor-esr': 'capacitor ESR',
+  coupling: 'coupling capacitor',
   'right-half-plane-zero': 'right half plane',
   sampling: 'sampling',
   inductor: 'inductor',
@@ -14,6 +15,15 @@ export const ROLE_NAMES: Readonly<Record<RootRole, string>> = {
   amplifier: 'amplifier',
   loop: 'loop',
   other: 'other',
+}
+
+/** The same where room is short: on drawings. */
+export const SHORT_NAMES: Readonly<Record<RootRole, string>> = {
+  ...ROLE_NAMES,
+  'capacitor-esr': 'ESR',
+  coupling: 'coupling',
+  'right-half-plane-zero': 'RHP zero',
+  'load-capacitor': 'load',
 }
 
 /** What a root means in time. */

@@ -4,7 +4,7 @@
  */
 import type { DesignDocument } from './document'
 import { GROUND, reduceNetwork, type Element, type Measure } from './network'
-import { topologyOf } from './topologies'
+import { TOPOLOGY_DEFINITIONS } from './topologies'
 import type { TopologyDefinition } from './topologies/topology'
 
 /** Rows of the measures that every interval carries; the currents of the output banks follow. */
@@ -36,6 +36,8 @@ export interface Circuit {
   readonly states: readonly string[]
   /** Index of the state that stops when conduction stops. */
   readonly stoppingState: number
+  /** With one inductor, discontinuous conduction can be computed; with more it is only detected. */
+  readonly canStop: boolean
   /** Constant inputs: line voltage, load source current, rectifier drop. */
   readonly inputs: readonly [number, number, number]
   readonly on: Interval
@@ -49,9 +51,9 @@ export interface Circuit {
   }[]
 }
 
-/** @throws DesignError 'singular-network' or 'not-yet-supported'. */
+/** @throws DesignError 'singular-network', or 'invalid-document' where the topology needs a part that is not there. */
 export function buildCircuit(design: DesignDocument, lineVoltage: number, outputCurrent: number): Circuit {
-  const topology = topologyOf(design.topology)
+  const topology = TOPOLOGY_DEFINITIONS[design.topology]
   const outputStates = mergeBanks(design)
   const { positive, negative } = topology.output
   const load = linearLoad(design, outputCurrent)
@@ -71,7 +73,7 @@ export function buildCircuit(design: DesignDocument, lineVoltage: number, output
     { kind: 'current', of: 'rectifier' },
     { kind: 'current', of: 'source' },
     { kind: 'current', of: topology.inductors[0]! },
-    topology.stress.switch,
+    topology.stress.switch ?? { kind: 'voltage', from: GROUND, to: GROUND },
     topology.stress.rectifier,
     ...outputStates.map((_, i): Measure => ({ kind: 'current', of: `output${i}` })),
   ]
@@ -90,6 +92,7 @@ export function buildCircuit(design: DesignDocument, lineVoltage: number, output
     period: 1 / design.switchingFrequency,
     states,
     stoppingState: 0,
+    canStop: topology.inductors.length === 1,
     inputs: [lineVoltage, load.current, design.rectifier.forwardVoltage],
     on: reduce([...common, ...topology.on(design)]),
     off: reduce([...common, ...topology.off(design)]),

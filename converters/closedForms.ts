@@ -2,6 +2,7 @@
 import { sensedSlopes } from './averaged/currentMode'
 import type { OpenPlant } from './plant'
 import type { ClosedForm } from './results'
+import type { Formula } from './topologies/topology'
 
 const BOOK = 'Erickson and Maksimović 2001'
 const toHertz = (omega: number): number => omega / (2 * Math.PI)
@@ -39,50 +40,51 @@ function continuousForms(plant: OpenPlant): ClosedForm[] {
     forms.push({
       key: 'right-half-plane-zero',
       label: 'Right-half-plane zero',
-      value: toHertz(ideal.rightHalfPlaneZero),
+      value: toHertz(ideal.rightHalfPlaneZero.value),
       unit: 'Hz',
-      equation: `${ideal.rightHalfPlaneZeroEquation}/2π`,
+      equation: `${ideal.rightHalfPlaneZero.equation}/2π`,
       source: BOOK,
     })
   }
   if (design.modulator.kind === 'peak-current-mode') return [...forms, ...currentModeForms(plant)]
-  forms.push({
-    key: 'resonance',
-    label: 'Resonance of the output filter',
-    value: toHertz(ideal.resonance),
-    unit: 'Hz',
-    equation: `${ideal.resonanceEquation}/2π`,
-    source: BOOK,
-  })
-  // Other loads have no resistance to damp the filter with.
-  if (design.load === 'resistive') {
+  if (ideal.filter) {
     forms.push({
-      key: 'quality',
-      label: 'Q of the output filter, load alone',
-      value: ideal.quality,
-      unit: '',
-      equation: ideal.qualityEquation,
+      key: 'resonance',
+      label: 'Resonance of the output filter',
+      value: toHertz(ideal.filter.resonance.value),
+      unit: 'Hz',
+      equation: `${ideal.filter.resonance.equation}/2π`,
       source: BOOK,
     })
   }
-  forms.push({
-    key: 'control-gain',
-    label: 'Output per unit of duty at low frequency',
-    value: ideal.controlGain,
-    unit: 'V',
-    equation: ideal.controlGainEquation,
-    source: BOOK,
-  })
-  forms.push({
-    key: 'line-gain',
-    label: 'Output per volt of line at low frequency',
-    value: ideal.lineGain,
-    unit: 'V/V',
-    equation: ideal.lineGainEquation,
-    source: BOOK,
-  })
-  return forms
+  // Other loads have no resistance to damp the filter with.
+  if (ideal.filter && design.load === 'resistive') {
+    forms.push({
+      key: 'quality',
+      label: 'Q of the output filter, load alone',
+      ...ideal.filter.quality,
+      unit: '',
+      source: BOOK,
+    })
+  }
+  return [...forms, controlGain(ideal.controlGain), lineGain(ideal.lineGain)]
 }
+
+const controlGain = (formula: Formula): ClosedForm => ({
+  key: 'control-gain',
+  label: 'Output per unit of duty at low frequency',
+  ...formula,
+  unit: 'V',
+  source: BOOK,
+})
+
+const lineGain = (formula: Formula): ClosedForm => ({
+  key: 'line-gain',
+  label: 'Output per volt of line at low frequency',
+  ...formula,
+  unit: 'V/V',
+  source: BOOK,
+})
 
 /** Q_p = 1/(π(m_c·D′ − ½)), m_c = 1 + S_e/S_n; and the slope at which m_c·D′ is one half. */
 function currentModeForms({ circuit, orbit, stage }: OpenPlant): ClosedForm[] {
@@ -123,26 +125,12 @@ function discontinuousForms({ circuit }: OpenPlant): ClosedForm[] {
     {
       key: 'load-pole',
       label: 'Pole of load and output capacitance',
-      value: toHertz(ideal.pole),
+      value: toHertz(ideal.pole.value),
       unit: 'Hz',
-      equation: `${ideal.poleEquation}/2π`,
+      equation: `${ideal.pole.equation}/2π`,
       source: BOOK,
     },
-    {
-      key: 'control-gain',
-      label: 'Output per unit of duty at low frequency',
-      value: ideal.controlGain,
-      unit: 'V',
-      equation: ideal.controlGainEquation,
-      source: BOOK,
-    },
-    {
-      key: 'line-gain',
-      label: 'Output per volt of line at low frequency',
-      value: ideal.lineGain,
-      unit: 'V/V',
-      equation: 'V/V_g',
-      source: BOOK,
-    },
+    controlGain(ideal.controlGain),
+    lineGain(ideal.lineGain),
   ]
 }

@@ -28,7 +28,7 @@ export function describeOperatingPoint(circuit: Circuit, orbit: Orbit): Operatin
     }))
   const output = extremes(trace(MEASURES.outputVoltage))
   const inductor = trace(MEASURES.inductorCurrent)
-  if (orbit.conduction === 'discontinuous') inductor[2]!.values.fill(0)
+  inductor[2]?.values.fill(0)
   const inductorExtremes = extremes(inductor)
   const switchCurrent = trace(MEASURES.switchCurrent)
   const lineCurrent = mean(trace(MEASURES.lineCurrent), period)
@@ -50,7 +50,7 @@ export function describeOperatingPoint(circuit: Circuit, orbit: Orbit): Operatin
     switchCurrent: figures(switchCurrent, period),
     rectifierCurrent: figures(trace(MEASURES.rectifierCurrent), period),
     outputCapacitorRmsCurrent: bankCurrents(circuit, (k) => rms(trace(MEASURES.firstBank + k), period)),
-    switchVoltage: extremes(trace(MEASURES.switchVoltage)).highest,
+    switchVoltage: circuit.topology.stress.switch && extremes(trace(MEASURES.switchVoltage)).highest,
     rectifierVoltage: extremes(trace(MEASURES.rectifierVoltage)).highest,
     boundaryCurrent: design.rectifier.kind === 'diode' ? boundaryCurrent(circuit) : null,
     controlVoltage: controlVoltage(circuit, orbit, turnOff),

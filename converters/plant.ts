@@ -49,7 +49,7 @@ export function openPlant(design: DesignDocument, point: PlantPoint): OpenPlant 
 function open(design: DesignDocument, point: PlantPoint): OpenPlant {
   const circuit = buildCircuit(design, point.lineVoltage, point.outputCurrent)
   const orbit = findOrbit(circuit)
-  const stage = orbit.conduction === 'continuous' ? averageStage(circuit, orbit.dutyCycle) : null
+  const stage = orbit.segments.length === 2 ? averageStage(circuit, orbit.dutyCycle) : null
   const model = averagedModel(circuit, orbit, stage)
   const poles = eigenvalues(model.A)
   const zeros = invariantZeros(model.A, column(model.B, CONTROL), model.C, model.D[CONTROL]!)
@@ -59,8 +59,10 @@ function open(design: DesignDocument, point: PlantPoint): OpenPlant {
     orbit,
     stage,
     model,
-    poles: describeRoots(poles, poleRoles(circuit, poles, orbit.conduction === 'continuous', isCurrentMode)),
-    zeros: describeRoots(zeros, (zero) => (zero.re > 0 ? 'right-half-plane-zero' : 'capacitor-esr')),
+    poles: describeRoots(poles, poleRoles(circuit, poles, stage !== null, isCurrentMode)),
+    zeros: describeRoots(zeros, (zero) =>
+      zero.re > 0 ? 'right-half-plane-zero' : zero.im !== 0 ? 'coupling' : 'capacitor-esr',
+    ),
     periodMap: periodMap(circuit, orbit),
     switched: switchedResponses(circuit, orbit),
     averaged: modelResponses(model),
@@ -99,9 +101,9 @@ function poleRoles(
   const size = (pole: Complex) => Math.hypot(pole.re, pole.im)
   const sorted = [...poles].sort((a, b) => size(a) - size(b))
   if (isContinuous && !isCurrentMode) {
-    const pair = sorted.filter((pole) => pole.im !== 0)
-    const filter = pair.length > 0 ? pair : sorted.slice(0, 2)
-    return (pole) => (filter.includes(pole) ? 'output-filter' : 'capacitor-esr')
+    const pairs = sorted.filter((pole) => pole.im !== 0)
+    const filter = pairs.length > 0 ? pairs.slice(0, 2) : sorted.slice(0, 2)
+    return (pole) => (filter.includes(pole) ? 'output-filter' : pairs.includes(pole) ? 'coupling' : 'capacitor-esr')
   }
   const fast = isContinuous
     ? // The pair at half the switching frequency, or the two real poles into which a steep ramp splits it.
@@ -109,6 +111,7 @@ function poleRoles(
     : sorted.slice(-1)
   return (pole) => {
     if (fast.includes(pole)) return isContinuous ? 'sampling' : 'inductor'
+    if (pole.im !== 0) return 'coupling'
     return pole === sorted[0] ? 'load-capacitor' : 'capacitor-esr'
   }
 }

@@ -29,6 +29,7 @@ export interface Root {
 export type RootRole =
   | 'output-filter' // the L-C pair, or the two real poles it has become
   | 'capacitor-esr'
+  | 'coupling' // of the coupling capacitor with its inductors
   | 'right-half-plane-zero'
   | 'sampling' // the pair near half the switching frequency in current mode
   | 'inductor' // the fast pole of discontinuous conduction
@@ -57,7 +58,8 @@ export interface OperatingPoint {
   readonly switchCurrent: CurrentFigures
   readonly rectifierCurrent: CurrentFigures
   readonly outputCapacitorRmsCurrent: readonly number[] // A, one a bank
-  readonly switchVoltage: number // V, highest while open
+  /** V, highest while open; null where it hangs on a part that the document does not describe. */
+  readonly switchVoltage: number | null
   readonly rectifierVoltage: number // V, highest reverse
   /** Load current at which conduction becomes discontinuous with a diode; null for a synchronous rectifier. */
   readonly boundaryCurrent: number | null // A
@@ -159,6 +161,7 @@ export type WarningCode =
   | 'unstable-loop'
   | 'models-part' // averaged and switched differ by more than 1 dB or 10° below twice the crossover
   | 'duty-near-limit'
+  | 'conduction-not-modelled' // the rectifier's current would reverse where only continuous conduction is computed
   | 'crossover-above-right-half-plane-zero'
   | 'crossover-near-switching'
   | 'conditionally-stable'

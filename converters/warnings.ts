@@ -108,6 +108,14 @@ function firstParting(frequencies: readonly number[], a: ResponseCurve, b: Respo
 
 function stageWarnings(design: DesignDocument, { operatingPoint }: Computed): Warning[] {
   const warnings: Warning[] = []
+  const stops = operatingPoint.rectifierDuty < 1 - operatingPoint.dutyCycle
+  if (operatingPoint.conduction === 'discontinuous' && !stops) {
+    warnings.push({
+      code: 'conduction-not-modelled',
+      message: `At this load the rectifier stops conducting before the period ends. For a ${design.topology} only continuous conduction is computed, so these figures do not hold here; raise the load or the inductances, or use a synchronous rectifier.`,
+      field: 'output.currentMinimum',
+    })
+  }
   if (operatingPoint.dutyCycle > 0.95 * design.dutyLimit) {
     warnings.push({
       code: 'duty-near-limit',
@@ -125,7 +133,7 @@ function stageWarnings(design: DesignDocument, { operatingPoint }: Computed): Wa
   const highest = Math.max(
     design.line.maximum,
     design.output.voltage,
-    operatingPoint.switchVoltage,
+    operatingPoint.switchVoltage ?? 0,
     operatingPoint.rectifierVoltage,
   )
   if (highest > EXTRA_LOW_VOLTAGE) {

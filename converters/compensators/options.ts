@@ -34,6 +34,8 @@ const PartLimits = z
     error: 'The smallest capacitance must lie below the largest.',
   })
 
+const series = z.enum(PREFERRED_SERIES, { error: `Must be one of ${PREFERRED_SERIES.join(', ')}.` })
+
 const ownValues = (value: typeof ohms) =>
   z
     .array(value)
@@ -54,8 +56,8 @@ export const CompensatorOptions = z.object({
       poles: z.array(hertz).max(2, { error: 'Must be at most 2 poles.' }),
     })
     .optional(),
-  resistorSeries: z.enum(PREFERRED_SERIES).default('E96'),
-  capacitorSeries: z.enum(PREFERRED_SERIES).default('E12'),
+  resistorSeries: series.default('E96'),
+  capacitorSeries: series.default('E12'),
   /** Values in stock, Ω and F; they replace the series. */
   ownResistors: ownValues(ohms).optional(),
   ownCapacitors: ownValues(farads).optional(),

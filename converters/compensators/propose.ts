@@ -7,8 +7,8 @@ import { describeNetworkRoots } from '../loop/networkRoles'
 import { invalid, parseDesign, problemsOf } from '../parse'
 import { formatQuantity } from '../quantities'
 import type { CompensatorProposals, Proposal } from '../results'
-import { boostFor, type Attempt, type AttemptRequest } from './attempts'
-import { chooseCrossover } from './chooseCrossover'
+import { boostFor, goalAt, type Attempt, type Goal } from './attempts'
+import { chooseCrossover, type Choice } from './chooseCrossover'
 import { readCorners, summariseCorners } from './cornerMargins'
 import { openCorners, type CornerPlants } from './cornerPlants'
 import { buildNetwork, networkRoots } from './networks'
@@ -44,14 +44,18 @@ export function proposeCompensator(design: unknown, options: CompensatorOptionsI
   const size = (attempt: Attempt) => (mayMove ? sizeAttempt(plants, attempt, limits, stock.resistors) : attempt)
   const wanted = checked.crossover ?? document.targets.crossover
   const type = checked.type ?? null
-  const choice = chooseCrossover({ plants, window, upperResistance, wanted, type, limits, size })
+  const { placement } = checked
+  const byHand = (goal: Goal) => size(attemptByHand(plants, upperResistance, goal, placement!))
+  // Zeros and poles placed by hand at a crossover of one's own are taken as they are; their margins say the rest.
+  const choice: Choice =
+    placement && wanted !== null && wanted < document.switchingFrequency / 2
+      ? { kind: 'choice', attempts: [byHand(goalAt(plants, 2 * Math.PI * wanted))], how: 'wanted' }
+      : chooseCrossover({ plants, window, upperResistance, wanted, type, limits, size })
   if (choice.kind === 'refusal') return refused(choice.message)
   const { goal, ideal } = choice.attempts[0]
-  const attempts = checked.placement
-    ? [size(attemptByHand({ plants, upperResistance, goal }, checked.placement))]
-    : choice.attempts
+  const attempts = placement ? [byHand(goal)] : choice.attempts
   const evaluated = attempts.map((attempt) =>
-    evaluate(plants, attempt, { stock, options: checked, window, byHand: checked.placement !== undefined }),
+    evaluate(plants, attempt, { stock, options: checked, window, byHand: placement !== undefined }),
   )
   return {
     window,
@@ -92,7 +96,9 @@ function unstableOrbit({ corners }: CornerPlants): string | null {
 
 /** @throws DesignError at the placement when its zeros and poles make no network. */
 function attemptByHand(
-  { plants, upperResistance, goal }: Omit<AttemptRequest, 'type'>,
+  plants: CornerPlants,
+  upperResistance: number,
+  goal: Goal,
   { zeros, poles }: NonNullable<CompensatorOptions['placement']>,
 ): Attempt {
   const placement = pairRoots(zeros, poles)

@@ -20,8 +20,8 @@ export interface Stock {
   readonly capacitors: readonly number[]
 }
 
-const NEAR_CAPACITORS = 4
-const NEAR_RESISTORS = 4
+const NEAR_CAPACITORS = 3
+const NEAR_RESISTORS = 3
 /** Resistors around the value that keeps a time constant when its capacitor has been rounded. */
 const COMPENSATING_RESISTORS = 2
 const TRIED_AT_CORNERS = 40

@@ -21,6 +21,7 @@ export interface Segment {
 }
 
 export interface Orbit {
+  /** With several inductors, `discontinuous` is detected only: the segments are then those of continuous conduction. */
   readonly conduction: 'continuous' | 'discontinuous'
   readonly dutyCycle: number
   readonly rectifierDuty: number
@@ -43,7 +44,8 @@ export function findOrbit(circuit: Circuit): Orbit {
   const continuous = findContinuousOrbit(circuit)
   const isWhole = !(continuous instanceof DesignError)
   if (isWhole && !(isDiode && reverses(circuit, continuous))) return continuous
-  const discontinuous = isDiode ? findDiscontinuousOrbit(circuit) : null
+  if (isWhole && !circuit.canStop) return { ...continuous, conduction: 'discontinuous' }
+  const discontinuous = isDiode && circuit.canStop ? findDiscontinuousOrbit(circuit) : null
   if (discontinuous) return discontinuous
   throw isWhole ? noOrbit(circuit) : continuous
 }

@@ -1,13 +1,13 @@
 /** Boost: line, inductor, node x; switch from x to ground; rectifier from x to the output. */
 import { GROUND } from '../network'
-import { inductorBetween, rectifierBetween, switchBetween, totalCapacitance } from './elements'
+import { inductorBetween, letters, POSITIVE_OUTPUT, rectifierBetween, switchBetween } from './elements'
 import type { TopologyDefinition } from './topology'
 
 export const boost: TopologyDefinition = {
   always: (design) => [inductorBetween(design, 'line', 'x')],
   on: (design) => [switchBetween(design, 'x', GROUND)],
   off: (design) => [rectifierBetween(design, 'x', 'output')],
-  output: { positive: 'output', negative: GROUND },
+  output: POSITIVE_OUTPUT,
   inductors: ['inductor'],
   capacitors: [],
   stress: {
@@ -15,37 +15,26 @@ export const boost: TopologyDefinition = {
     rectifier: { kind: 'voltage', from: 'output', to: 'x' },
   },
   closedForms: {
-    continuous: ({ design, outputCurrent }, dutyCycle) => {
+    continuous: (point, dutyCycle) => {
       const off = 1 - dutyCycle
-      const V = design.output.voltage
-      const L = design.inductor.inductance
-      const C = totalCapacitance(design)
-      const R = V / outputCurrent
+      const { L, C, V, R } = letters(point)
       return {
-        controlGain: V / off,
-        controlGainEquation: 'V/D′',
-        lineGain: 1 / off,
-        lineGainEquation: '1/D′',
-        resonance: off / Math.sqrt(L * C),
-        resonanceEquation: 'D′/√(LC)',
-        quality: off * R * Math.sqrt(C / L),
-        qualityEquation: 'D′R√(C/L)',
-        rightHalfPlaneZero: (off * off * R) / L,
-        rightHalfPlaneZeroEquation: 'D′²R/L',
+        controlGain: { value: V / off, equation: 'V/D′' },
+        lineGain: { value: 1 / off, equation: '1/D′' },
+        filter: {
+          resonance: { value: off / Math.sqrt(L * C), equation: 'D′/√(LC)' },
+          quality: { value: off * R * Math.sqrt(C / L), equation: 'D′R√(C/L)' },
+        },
+        rightHalfPlaneZero: { value: (off * off * R) / L, equation: 'D′²R/L' },
       }
     },
-    discontinuous: ({ design, lineVoltage, outputCurrent }) => {
-      const V = design.output.voltage
-      const R = V / outputCurrent
-      const M = V / lineVoltage
-      const K = (2 * design.inductor.inductance * design.switchingFrequency) / R
-      const D = Math.sqrt(K * M * (M - 1))
+    discontinuous: (point) => {
+      const { L, C, V, R, M, switchingFrequency } = letters(point)
+      const D = Math.sqrt(((2 * L * switchingFrequency) / R) * M * (M - 1))
       return {
-        controlGain: ((2 * V) / D) * ((M - 1) / (2 * M - 1)),
-        controlGainEquation: '(2V/D)·(M − 1)/(2M − 1)',
-        lineGain: M,
-        pole: (2 * M - 1) / ((M - 1) * R * totalCapacitance(design)),
-        poleEquation: '(2M − 1)/((M − 1)RC)',
+        controlGain: { value: ((2 * V) / D) * ((M - 1) / (2 * M - 1)), equation: '(2V/D)·(M − 1)/(2M − 1)' },
+        lineGain: { value: M, equation: 'M' },
+        pole: { value: (2 * M - 1) / ((M - 1) * R * C), equation: '(2M − 1)/((M − 1)RC)' },
       }
     },
   },

@@ -2,7 +2,7 @@
 import type { DesignDocument } from '../document'
 import type { Element, Measure } from '../network'
 
-/** The design at one line voltage and load current: what closed forms and starting guesses are made of. */
+/** The design at one line voltage and load current: what closed forms are made of. */
 export interface TopologyPoint {
   readonly design: DesignDocument
   readonly lineVoltage: number // V
@@ -18,12 +18,15 @@ export interface TopologyDefinition {
   readonly off: (design: DesignDocument) => readonly Element[]
   /** Nodes of the output, positive first. An inverting stage has ground first: its output is a magnitude. */
   readonly output: { readonly positive: string; readonly negative: string }
-  /** Inductor states, the one that stands still when conduction stops first. */
+  /** Inductor states. With a single one, that is the current which stops in discontinuous conduction. */
   readonly inductors: readonly string[]
   /** Capacitor states beside the output banks. */
   readonly capacitors: readonly string[]
-  /** Voltages across the open switch and the blocking rectifier, positive when they block. */
-  readonly stress: { readonly switch: Measure; readonly rectifier: Measure }
+  /**
+   * Voltages across the open switch and the blocking rectifier, positive when they block. The switch's is null where it
+   * hangs on a part that the document does not describe.
+   */
+  readonly stress: { readonly switch: Measure | null; readonly rectifier: Measure }
   /** Textbook results with ideal parts, for insight beside the exact ones. */
   readonly closedForms: {
     readonly continuous: (point: TopologyPoint, dutyCycle: number) => IdealContinuous
@@ -31,25 +34,23 @@ export interface TopologyDefinition {
   }
 }
 
+export interface Formula {
+  readonly value: number
+  readonly equation: string
+}
+
 /** Erickson and Maksimović, Fundamentals of Power Electronics, 2nd ed. 2001, table 8.2, for an ideal converter. */
 export interface IdealContinuous {
-  readonly controlGain: number // V per unit of duty, G_d0
-  readonly controlGainEquation: string
-  readonly lineGain: number // V/V, G_g0
-  readonly lineGainEquation: string
-  readonly resonance: number // rad/s, ω₀
-  readonly resonanceEquation: string
-  readonly quality: number // Q
-  readonly qualityEquation: string
-  readonly rightHalfPlaneZero: number | null // rad/s, ω_z
-  readonly rightHalfPlaneZeroEquation: string
+  readonly controlGain: Formula // V per unit of duty, G_d0
+  readonly lineGain: Formula // V/V, G_g0
+  /** Null where the stage is not of second order. */
+  readonly filter: { readonly resonance: Formula /* rad/s */; readonly quality: Formula } | null
+  readonly rightHalfPlaneZero: Formula | null // rad/s
 }
 
 /** The same book, table 11.3: low-frequency model in discontinuous conduction. */
 export interface IdealDiscontinuous {
-  readonly controlGain: number // V per unit of duty
-  readonly controlGainEquation: string
-  readonly lineGain: number // V/V
-  readonly pole: number // rad/s
-  readonly poleEquation: string
+  readonly controlGain: Formula // V per unit of duty
+  readonly lineGain: Formula // V/V
+  readonly pole: Formula // rad/s
 }

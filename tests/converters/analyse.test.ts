@@ -5,8 +5,7 @@ import { AMPLIFIER_KINDS, CONTROLS } from '@/tests/support/kinds'
 import { allNumbers } from '@/tests/support/allNumbers'
 import { boostDesign, buckDesign } from '@/tests/support/designs'
 import { expectRelative } from '@/tests/support/expectRelative'
-import { COMPUTED_TOPOLOGIES } from '@/converters/topologies'
-import { LOAD_KINDS } from '@/converters/document'
+import { LOAD_KINDS, TOPOLOGIES } from '@/converters/document'
 
 /** The refusal that `work` ends in. */
 function refusalOf(work: () => unknown): DesignError {
@@ -185,7 +184,7 @@ const decades = (low: number, high: number) =>
 
 const anyDesign = fc
   .record({
-    topology: fc.constantFrom(...COMPUTED_TOPOLOGIES),
+    topology: fc.constantFrom(...TOPOLOGIES),
     control: fc.constantFrom(...CONTROLS),
     amplifier: fc.constantFrom(...AMPLIFIER_KINDS),
     load: fc.constantFrom(...LOAD_KINDS),

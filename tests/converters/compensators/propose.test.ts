@@ -124,6 +124,18 @@ describe('a 12 V to 3.3 V, 8 A buck at 500 kHz', () => {
     // E192 steps are 1.2 %; two parts make a zero.
     zeros.forEach((zero, i) => expect(Math.abs(zero.frequency / placement.zeros[i]! - 1)).toBeLessThan(0.15))
   })
+
+  it('answers a hand-placed network with its margins even where the wizard itself would say no', () => {
+    const crossover = 60e3
+    expect(proposeCompensator(logicRail, { crossover, type: 'II' }).refusal).not.toBeNull()
+    const { proposals, refusal } = proposeCompensator(logicRail, {
+      crossover,
+      placement: { zeros: [6e3], poles: [300e3] },
+    })
+    expect(refusal).toBeNull()
+    expect(proposals[0]?.type).toBe('II')
+    expect(proposals[0]?.shortfalls[0]).toMatch(/phase margin|unstable/)
+  })
 })
 
 describe('a 5 V to 24 V boost in peak current mode', () => {
