@@ -24,10 +24,6 @@ const DECADES: Readonly<Record<PreferredSeries, readonly number[]>> = {
   E192,
 }
 
-/** One decade of a series, 1 ≤ value < 10. */
-export const preferredDecade = (series: PreferredSeries): number[] =>
-  DECADES[series].map((hundredths) => hundredths / 100)
-
 /**
  * All values of a series between two limits, both included, ascending. Each is the double nearest to its decimal
  * digits (4.7e-6, not 4.7·10⁻⁶ rounded twice).

@@ -53,7 +53,7 @@ export function worstRippleLine({ topology, line, output }: StageRequirements): 
 }
 
 /** Lowest right-half-plane zero of a boost stage, Hz: D′²·R/(2πL) (the same book, table 8.2). */
-export function lowestRightHalfPlaneZero(requirements: StageRequirements, inductance: number): number | null {
+function lowestRightHalfPlaneZero(requirements: StageRequirements, inductance: number): number | null {
   if (requirements.topology !== 'boost') return null
   const { dutyCycle } = stageAt(requirements, requirements.line.minimum)
   const load = requirements.output.voltage / requirements.output.currentMaximum
