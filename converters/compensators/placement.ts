@@ -56,7 +56,7 @@ const GAIN_TOLERANCE = 1e-10
 const MOST_CORRECTIONS = 60
 
 /** The type that a placement makes. */
-export function typeOf({ main, lead }: Placement): CompensatorType {
+function typeOf({ main, lead }: Placement): CompensatorType {
   if (lead !== null) return 'III'
   return main === null ? 'I' : 'II'
 }
