@@ -7,7 +7,17 @@ import { mustRun, ROOT } from './run.mjs'
 import { whenChanged } from './stamps.mjs'
 
 const SHARED = ['converters', 'server/contract', 'package-lock.json', 'tsconfig.json', 'scripts/lib/build.mjs']
-const WEB_SOURCES = ['app', 'components', 'hooks', 'constants', 'assets', 'app.json', 'metro.config.cjs', ...SHARED]
+const WEB_SOURCES = [
+  'app',
+  'public',
+  'components',
+  'hooks',
+  'constants',
+  'assets',
+  'app.json',
+  'metro.config.cjs',
+  ...SHARED,
+]
 const SERVER_SOURCES = ['server', 'db', ...SHARED]
 const COMPRESSIBLE = /\.(js|css|html|svg|json|ico|ttf|map)$/
 
