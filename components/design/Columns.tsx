@@ -34,7 +34,7 @@ export function Columns({ inputs, curves, figures, phoneOrder }: ColumnsProps) {
   const edge = { borderRightColor: theme.rule }
   return (
     <View style={styles.row}>
-      <Column width={isExtraWide ? 380 : 360} style={[styles.ruled, edge]}>
+      <Column width={380} style={[styles.ruled, edge]}>
         {inputs}
       </Column>
       {isExtraWide ? (

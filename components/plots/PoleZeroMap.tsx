@@ -7,7 +7,7 @@ import { PlotText } from './PlotText'
 import { placeOf, planeOf, radiusShare, type Plane, type PlaneRoot } from './sPlane'
 import { decadeLabel } from './ticks'
 import { figure, ratio } from '@/components/format'
-import { ROLE_NAMES } from '@/components/roots'
+import { ROLE_NAMES, SHORT_NAMES } from '@/components/roots'
 import type { Palette } from '@/constants/theme'
 import { useTheme } from '@/hooks/useTheme'
 
@@ -85,7 +85,7 @@ function Map({ roots, width }: { readonly roots: readonly PlaneRoot[]; readonly 
     const { x, y } = placeOf(plane, item.root)
     return { item, x: frame.centre + x * frame.radius, y: frame.axis - y * frame.radius }
   })
-  const texts = marks.map(({ item }) => `${ROLE_NAMES[item.root.role]} ${figure(item.root.frequency, 'Hz')}`)
+  const texts = marks.map(({ item }) => `${SHORT_NAMES[item.root.role]} ${figure(item.root.frequency, 'Hz')}`)
   const obstacles: Box[] = [
     ...marks.map(({ x, y }) => ({ x: x - 6, y: y - 6, width: 12, height: 12 })),
     { x: 0, y: 0, width: 90, height: 22 },

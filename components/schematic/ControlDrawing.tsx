@@ -12,7 +12,7 @@ export function ControlDrawing({ design, layout, color, ground, valueColor }: Dr
   const isBoost = design.topology === 'boost'
   const gate = isBoost ? node - 20 : beforeNode
   const gateFrom = isBoost ? (top + bottom) / 2 : top + 20
-  const out = width - 6
+  const out = width - 4
   const modulatorWidth = control.middle - control.left - 14
   const amplifierLeft = control.middle + 14
   const block = { top: control.top, height: control.bottom - control.top, color, ground, valueColor }

@@ -8,7 +8,7 @@ import type { CompensatorPart, DesignDocument } from '@/converters/document'
 import { formatEntry } from '@/hooks/draft/entries'
 import { useTheme } from '@/hooks/useTheme'
 
-const WIDTH = 330
+const WIDTH = 308
 const HEIGHT = 262
 
 type Parts = Partial<Record<CompensatorPart, number | null>>
@@ -110,8 +110,8 @@ interface NetworkProps {
 }
 
 const NODE = { x: 104, y: 158 }
-const INPUT = 146 // where the amplifier's inputs stand
-const OUT = { x: 194, y: 172 }
+const INPUT = 142 // where the amplifier's inputs stand
+const OUT = { x: 188, y: 172 }
 
 /** From the output to the amplifier's inverting input. */
 function Divider({ parts, hasLead, lower, ink }: NetworkProps & { readonly lower: number | null }) {
@@ -181,7 +181,7 @@ function Amplifier({
 
 /** Op-amp: from the amplifier's output back to its inverting input. */
 function Feedback({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: boolean }) {
-  const right = 274
+  const right = 264
   const left = 124
   return (
     <G>
@@ -193,13 +193,13 @@ function Feedback({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: bo
       <Junction x={left} y={NODE.y} color={ink.color} />
       <Junction x={right} y={OUT.y} color={ink.color} />
       {isTypeI ? (
-        <Part name="C1" parts={parts} x={199} y={106} ink={ink} />
+        <Part name="C1" parts={parts} x={194} y={106} ink={ink} />
       ) : (
         <>
-          <Part name="R2" parts={parts} x={164} y={106} ink={ink} />
-          <Part name="C1" parts={parts} x={234} y={106} ink={ink} />
+          <Part name="R2" parts={parts} x={160} y={106} ink={ink} />
+          <Part name="C1" parts={parts} x={228} y={106} ink={ink} />
           <Wire color={ink.color} d={`M${left} 106V44H${right}V106`} isDashed={!parts.C2} />
-          <Part name="C2" parts={parts} x={199} y={44} ink={ink} />
+          <Part name="C2" parts={parts} x={194} y={44} ink={ink} />
           <Junction x={left} y={106} color={ink.color} />
           <Junction x={right} y={106} color={ink.color} />
         </>
@@ -210,8 +210,8 @@ function Feedback({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: bo
 
 /** Transconductance amplifier: from its output to ground. */
 function Shunt({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: boolean }) {
-  const first = 216
-  const second = 296
+  const first = 206
+  const second = 282
   const top = 40
   return (
     <G>

@@ -84,7 +84,7 @@ export function PowerDrawing({ design, layout, color, ground, valueColor }: Draw
         </G>
       ))}
       <Load kind={design.load} x={load} y={middle} {...ink} />
-      {beside(load + 16, values.load)}
+      {beside(load + 14, values.load)}
     </G>
   )
 }

@@ -26,7 +26,7 @@ export interface StageLayout {
 }
 
 const BANK_STEP = 74
-const BASE = { source: 22, beforeNode: 68, node: 108, afterNode: 152, bank: 198, load: 272, end: 326 } as const
+const BASE = { source: 18, beforeNode: 62, node: 103, afterNode: 143, bank: 184, load: 251, end: 308 } as const
 
 /** The narrowest drawing in which no label covers another. */
 export function leastWidth(banks: number): number {
@@ -50,6 +50,6 @@ export function stageLayout(available: number, banks: number): StageLayout {
     afterNode: at(BASE.afterNode),
     banks: Array.from({ length: banks }, (_, index) => at(BASE.bank + index * BANK_STEP)),
     load: at(BASE.load + shift),
-    control: { top: 240, bottom: 300, left: 8, middle: width / 2, right: width - 26 },
+    control: { top: 240, bottom: 300, left: 8, middle: width / 2, right: width - 22 },
   }
 }
