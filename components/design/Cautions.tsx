@@ -14,7 +14,7 @@ export function Caution() {
 /** Where line or any node can exceed 60 V DC. */
 function Hazard({ message }: { readonly message: string }) {
   return (
-    <Notice kind="caution" title="Hazardous voltage">
+    <Notice kind="caution" title={TITLES['hazardous-voltage']}>
       <Text variant="small">{message}</Text>
       <Text variant="small">
         Mind isolation, creepage and the charge that stays in capacitors. Use injection equipment that is rated and
@@ -22,6 +22,20 @@ function Hazard({ message }: { readonly message: string }) {
       </Text>
     </Notice>
   )
+}
+
+const TITLES: Readonly<Record<Warning['code'], string>> = {
+  'subharmonic-oscillation': 'Subharmonic oscillation',
+  'unstable-orbit': 'The stage does not repeat from period to period',
+  'unstable-loop': 'The closed loop is unstable',
+  'models-part': 'The two models part',
+  'duty-near-limit': 'Duty near its limit',
+  'crossover-above-right-half-plane-zero': 'Crossover too near the right-half-plane zero',
+  'crossover-near-switching': 'Crossover near the switching frequency',
+  'conditionally-stable': 'Stable only while the gain stays up',
+  'several-crossovers': 'Several crossovers',
+  'ripple-large': 'Large ripple',
+  'hazardous-voltage': 'Hazardous voltage',
 }
 
 const FAULTS: readonly Warning['code'][] = ['subharmonic-oscillation', 'unstable-orbit', 'unstable-loop']
@@ -32,7 +46,12 @@ export function Warnings({ warnings }: { readonly warnings: readonly Warning[] }
     warning.code === 'hazardous-voltage' ? (
       <Hazard key={index} message={warning.message} />
     ) : (
-      <Notice key={index} kind={FAULTS.includes(warning.code) ? 'fault' : 'caution'} isLive>
+      <Notice
+        key={index}
+        kind={FAULTS.includes(warning.code) ? 'fault' : 'caution'}
+        title={TITLES[warning.code]}
+        isLive
+      >
         {warning.message}
       </Notice>
     ),

@@ -1,4 +1,4 @@
-import { expect, figureOf, goTo, openSample, test } from './fixtures'
+import { expect, figureOf, forgive, goTo, openSample, test } from './fixtures'
 
 const LOGIC_RAIL = 'Logger logic rail, 12 V to 3.3 V'
 
@@ -38,7 +38,7 @@ test('values are taken as engineers write them, the decimal comma included', asy
   await expect(field).toHaveValue('4.4 µH')
 })
 
-test('a buck above its line is refused at the field, and the last figures stay', async ({ page }) => {
+test('a buck above its line is refused at the field, and the last figures stay', async ({ page, consoleMessages }) => {
   await openSample(page, LOGIC_RAIL)
   const field = page.getByLabel('Output voltage')
   await expect(figureOf(page, 'Duty cycle')).toContainText('0.2864')
@@ -46,6 +46,8 @@ test('a buck above its line is refused at the field, and the last figures stay',
   await expect(field).toHaveAttribute('aria-invalid', 'true')
   await expect(field).toHaveValue('14')
   await expect(page.getByText('This design cannot be computed as it stands')).toBeVisible()
+  await expect(figureOf(page, 'Duty cycle')).toContainText('0.2864')
+  forgive(consoleMessages, /status of 422/)
 })
 
 test('a line above the highest is held back until the highest follows', async ({ page }) => {
@@ -83,7 +85,7 @@ test('banks of output capacitors are added and taken away', async ({ page }) => 
 test('slope compensation that is missing is named when the orbit is not stable', async ({ page }) => {
   await openSample(page, 'Sensor boost, 5 V to 24 V')
   await page.getByLabel('Slope compensation').fill('0')
-  await expect(page.getByText(/subharmonic/i).first()).toBeVisible()
+  await expect(page.getByText('Subharmonic oscillation', { exact: true })).toBeVisible()
   await goTo(page, 'Plant')
-  await expect(page.getByText(/subharmonic/i).first()).toBeVisible()
+  await expect(page.getByText('Subharmonic oscillation', { exact: true })).toBeVisible()
 })
