@@ -61,9 +61,18 @@ const OutputCapacitorBank = z.object({
     .int({ error: 'Must be a whole number of pieces.' })
     .min(1, { error: 'Must be at least 1.' })
     .max(10_000, { error: 'Must be at most 10 000.' }),
-  capacitance, // F, one piece
+  capacitance, // F, one piece, without bias
   esr: resistance.default(0), // Ω, one piece
+  /** Share of the capacitance that is lost at the output voltage, as ceramics of high permittivity lose it. */
+  biasDerating: quantity('(a fraction)', 0, 0.95).nullish(),
 })
+
+/** F of one piece at the output voltage. */
+export const effectiveCapacitance = ({
+  capacitance: unbiased,
+  biasDerating,
+}: Pick<z.infer<typeof OutputCapacitorBank>, 'capacitance' | 'biasDerating'>): number =>
+  unbiased * (1 - (biasDerating ?? 0))
 
 const Rectifier = z.object({
   kind: z.enum(['synchronous', 'diode']),
@@ -78,15 +87,26 @@ const PeakCurrentMode = z.object({
   slopeCompensation: quantity('V/s', 0, 1e12).default(0),
 })
 
+/** V between which the amplifier's output can move; left out, what the modulator can use and a half more. */
+const outputLimits = z
+  .object({ minimum: quantity('V', -1e4, 1e4), maximum: quantity('V', -1e4, 1e4) })
+  .refine((limits) => limits.minimum < limits.maximum, {
+    path: ['maximum'],
+    error: 'The upper limit must lie above the lower one.',
+  })
+  .nullish()
+
 const OpAmp = z.object({
   kind: z.literal('op-amp'),
   gainBandwidth: above('Hz', 1e12).default(10e6),
   openLoopGain: above('V/V', 1e12).default(1e4),
+  outputLimits,
 })
 const Transconductance = z.object({
   kind: z.literal('transconductance'),
   transconductance: above('S', 1e3),
   outputResistance: above('Ω', 1e12).default(1e6),
+  outputLimits,
 })
 const ShuntOptocoupler = z.object({
   kind: z.literal('shunt-optocoupler'),
@@ -94,6 +114,7 @@ const ShuntOptocoupler = z.object({
   pullUpResistance: above('Ω', 1e9),
   ledResistance: above('Ω', 1e9),
   optocouplerPole: above('Hz', 1e9),
+  outputLimits,
 })
 
 /** Zero and absent both mean "not fitted"; which parts a network needs depends on its type and amplifier. */
@@ -132,6 +153,8 @@ const Tolerances = z.object({
   esr: tolerance(0.5),
   resistor: tolerance(0.01),
   smallCapacitor: tolerance(0.05),
+  modulator: tolerance(0.1), // ramp, or sensed current and slope compensation
+  amplifier: tolerance(0.3), // gain-bandwidth, or transconductance
 })
 
 export const DesignDocument = z.object({

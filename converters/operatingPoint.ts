@@ -1,6 +1,7 @@
 /** Figures of the steady state, read off the orbit. */
 import { MEASURES, type Circuit } from './circuit'
 import { averageStage } from './averaged/continuous'
+import { effectiveCapacitance } from './document'
 import { DesignError } from './errors'
 import type { CurrentFigures, OperatingPoint } from './results'
 import { exponential } from './numeric/exponential'
@@ -116,8 +117,8 @@ function bankCurrents(circuit: Circuit, rmsOfState: (k: number) => number): numb
   circuit.outputStates.forEach(({ capacitance, banks }, k) => {
     const whole = rmsOfState(k)
     for (const bank of banks) {
-      const { count, capacitance: piece } = circuit.design.outputCapacitors[bank]!
-      currents[bank] = (whole * count * piece) / capacitance
+      const piece = circuit.design.outputCapacitors[bank]!
+      currents[bank] = (whole * piece.count * effectiveCapacitance(piece)) / capacitance
     }
   })
   return currents

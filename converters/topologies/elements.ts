@@ -1,5 +1,5 @@
 /** The elements that several topologies share, built from the design document. */
-import type { DesignDocument } from '../document'
+import { effectiveCapacitance, type DesignDocument } from '../document'
 import { DesignError } from '../errors'
 import { GROUND, type Element } from '../network'
 import type { TopologyPoint } from './topology'
@@ -68,7 +68,7 @@ export function letters({ design, lineVoltage, outputCurrent }: TopologyPoint, t
   const V = design.output.voltage
   return {
     L: design.inductor.inductance,
-    C: design.outputCapacitors.reduce((sum, bank) => sum + bank.count * bank.capacitance, 0),
+    C: design.outputCapacitors.reduce((sum, bank) => sum + bank.count * effectiveCapacitance(bank), 0),
     V,
     R: V / outputCurrent,
     M: V / (turnsRatio * lineVoltage),
