@@ -36,7 +36,7 @@ export default function StartScreen() {
             <QuickStartForm onProposal={setProposal} />
           </Card>
         </View>
-        <View style={isWide ? styles.side : null}>
+        <View style={isWide ? styles.side : styles.below}>
           {proposal ? <ProposedStage proposal={proposal} /> : null}
           <View style={styles.samples}>
             <Text variant="heading" heading={2}>
@@ -62,6 +62,7 @@ const styles = StyleSheet.create({
   narrow: { gap: space.lg },
   form: { flexGrow: 1, flexShrink: 1, minWidth: 0 },
   side: { width: '44%', gap: space.xl },
+  below: { gap: space.xl },
   samples: { gap: space.md },
   left: { alignSelf: 'flex-start' },
 })

@@ -2,9 +2,11 @@
 import { formatQuantity, type Unit } from '@/converters/quantities'
 import type { Verdict } from './ui/Figure'
 
-/** Three significant figures; what does not exist says so. */
+/** Three significant figures, angles and decibels to a tenth; what does not exist says so. */
 export function figure(value: number | null | undefined, unit: Unit): string {
-  return value === null || value === undefined ? 'none' : formatQuantity(value, unit)
+  if (value === null || value === undefined) return 'none'
+  if (unit === '°') return degrees(value)
+  return unit === 'dB' ? decibels(value) : formatQuantity(value, unit)
 }
 
 /** Phase and gain to a tenth, as analysers print them. */

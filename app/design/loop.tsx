@@ -10,6 +10,7 @@ import { Steps } from '@/components/loop/Steps'
 import { WindowCard } from '@/components/loop/WindowCard'
 import { WizardCard } from '@/components/loop/WizardCard'
 import { PointChips } from '@/components/plant/PointChips'
+import { Responses } from '@/components/plant/Responses'
 import { PoleZeroMap } from '@/components/plots/PoleZeroMap'
 import { upperHalf, type PlaneRoot } from '@/components/plots/sPlane'
 import { Card } from '@/components/ui/Card'
@@ -23,75 +24,118 @@ import { useDesignAnalysis } from '@/hooks/useDesignAnalysis'
 import { useProposals } from '@/hooks/useProposals'
 
 export default function LoopScreen() {
-  const { design } = useDraft()
-  const { analysis, error, isStale, retry } = useDesignAnalysis()
-  const proposals = useProposals()
-  const corners = useCornersQuery(design)
-  const hasNetwork = design.compensator != null
-  const loop = hasNetwork ? analysis?.loop : null
-  const margins = hasNetwork ? analysis?.margins : null
-  const cornerSet = hasNetwork ? corners.data : undefined
+  const hasNetwork = useDraft().design.compensator != null
   return (
     <>
       <Head>
         <title>Loop · Steadrail</title>
       </Head>
-      <Columns
-        phoneOrder={hasNetwork ? ['curves', 'inputs', 'figures'] : ['inputs', 'curves', 'figures']}
-        inputs={
-          <>
-            {proposals.data ? (
-              <WindowCard proposals={proposals.data} />
-            ) : proposals.error ? (
-              error ? null : (
-                <Fault error={proposals.error} onRetry={() => void proposals.refetch()} />
-              )
-            ) : (
-              <Loading label="Looking for the room that the crossover has" bars={[240]} />
-            )}
-            <NetworkCard />
-            <WizardCard />
-          </>
-        }
-        curves={
-          <>
-            <EntryNotice />
-            {error ? <Fault error={error} isStale={isStale} onRetry={retry} /> : null}
-            {analysis && loop && margins ? (
-              <>
-                <LoopFigures margins={margins} corners={cornerSet} targets={design.targets} />
-                <PointChips />
-                <Card>
-                  <LoopPlot
-                    loop={loop}
-                    margins={margins}
-                    corners={cornerSet}
-                    frequencies={analysis.frequencies}
-                    switchingFrequency={design.switchingFrequency}
-                  />
-                  <Text variant="small" tone="quiet">
-                    The pale band is the spread over the corners of line and load.
-                  </Text>
-                </Card>
-                <Warnings warnings={analysis.warnings} />
-              </>
-            ) : hasNetwork ? (
-              error ? null : (
-                <Loading label="Computing the loop" bars={[130, 460]} />
-              )
-            ) : (
-              <Notice kind="note" title="The loop is open">
-                <Text>
-                  There is no network yet. Have parts proposed, take one of the networks over, and the loop gain, its
-                  margins at every corner and the steps appear here.
-                </Text>
-              </Notice>
-            )}
-          </>
-        }
-        figures={analysis && loop ? <LoopDetails analysis={analysis} loop={loop} /> : <Caution />}
-      />
+      {hasNetwork ? <ClosedLoop /> : <OpenLoop />}
     </>
+  )
+}
+
+/** Where the crossover may sit: the first thing to know, with or without a network. */
+function Room() {
+  const { error } = useDesignAnalysis()
+  const proposals = useProposals()
+  if (proposals.data) return <WindowCard proposals={proposals.data} />
+  if (!proposals.error) return <Loading label="Looking for the room that the crossover has" bars={[240]} />
+  // Where the design itself is at fault, that is said beside it.
+  return error ? null : <Fault error={proposals.error} onRetry={() => void proposals.refetch()} />
+}
+
+function Faults() {
+  const { error, isStale, retry } = useDesignAnalysis()
+  return (
+    <>
+      <EntryNotice />
+      {error ? <Fault error={error} isStale={isStale} onRetry={retry} /> : null}
+    </>
+  )
+}
+
+/** No network yet: the room for the crossover, what there is to work with, and the networks to choose from. */
+function OpenLoop() {
+  const { design } = useDraft()
+  const { analysis } = useDesignAnalysis()
+  return (
+    <Columns
+      phoneOrder={['inputs', 'curves', 'figures']}
+      inputs={
+        <>
+          <Faults />
+          <Room />
+        </>
+      }
+      curves={
+        <>
+          <Notice kind="note" title="The loop is open">
+            <Text>
+              There is no network yet. Have parts proposed and take one of the networks over: the loop gain, its margins
+              at every corner and the steps appear here.
+            </Text>
+          </Notice>
+          <WizardCard />
+        </>
+      }
+      figures={
+        <>
+          {analysis ? (
+            <Card>
+              <Responses analysis={analysis} switchingFrequency={design.switchingFrequency} />
+            </Card>
+          ) : null}
+          <Caution />
+        </>
+      }
+    />
+  )
+}
+
+function ClosedLoop() {
+  const { design } = useDraft()
+  const { analysis, error } = useDesignAnalysis()
+  const corners = useCornersQuery(design)
+  const { loop, margins } = analysis ?? {}
+  return (
+    <Columns
+      phoneOrder={['curves', 'inputs', 'figures']}
+      inputs={
+        <>
+          <Room />
+          <NetworkCard />
+          <WizardCard />
+        </>
+      }
+      curves={
+        <>
+          <Faults />
+          {analysis && loop && margins ? (
+            <>
+              <LoopFigures margins={margins} corners={corners.data} targets={design.targets} />
+              <PointChips />
+              <Card>
+                <LoopPlot
+                  loop={loop}
+                  margins={margins}
+                  corners={corners.data}
+                  frequencies={analysis.frequencies}
+                  switchingFrequency={design.switchingFrequency}
+                />
+                <Text variant="small" tone="quiet">
+                  The pale band is the spread over the corners of line and load.
+                </Text>
+              </Card>
+              <Warnings warnings={analysis.warnings} />
+            </>
+          ) : error ? null : (
+            <Loading label="Computing the loop" bars={[130, 460]} />
+          )}
+        </>
+      }
+      figures={analysis && loop ? <LoopDetails analysis={analysis} loop={loop} /> : <Caution />}
+    />
   )
 }
 

@@ -29,6 +29,7 @@ const TITLES: Readonly<Record<Warning['code'], string>> = {
   'unstable-orbit': 'The stage does not repeat from period to period',
   'unstable-loop': 'The closed loop is unstable',
   'models-part': 'The two models part',
+  'conduction-not-modelled': 'Outside what is computed',
   'duty-near-limit': 'Duty near its limit',
   'crossover-above-right-half-plane-zero': 'Crossover too near the right-half-plane zero',
   'crossover-near-switching': 'Crossover near the switching frequency',

@@ -3,6 +3,7 @@ import { Figure } from '@/components/ui/Figure'
 import { FigureGrid } from '@/components/ui/FigureGrid'
 import { formatQuantity } from '@/converters/quantities'
 import type { CornerSet, Margins } from '@/converters/results'
+import { formatEntry } from '@/hooks/draft/entries'
 import type { DesignDocument } from '@/converters/document'
 
 export interface LoopFiguresProps {
@@ -22,13 +23,13 @@ export function LoopFigures({ margins, corners, targets }: LoopFiguresProps) {
         label="Phase margin"
         value={figure(margins.phaseMargin, '°')}
         verdict={verdictOf(margins.phaseMargin, targets.phaseMargin, '°')}
-        note={`aim ${figure(targets.phaseMargin, '°')}`}
+        note={`aim ${formatEntry(targets.phaseMargin, '°')}`}
       />
       <Figure
         label="Gain margin"
         value={figure(margins.gainMargin, 'dB')}
         verdict={verdictOf(margins.gainMargin, targets.gainMargin, 'dB')}
-        note={margins.gainMargin === null ? 'phase stays above −180°' : `aim ${figure(targets.gainMargin, 'dB')}`}
+        note={margins.gainMargin === null ? 'phase stays above −180°' : `aim ${formatEntry(targets.gainMargin, 'dB')}`}
       />
       <Figure
         label="Modulus margin"

@@ -94,7 +94,7 @@ function Part({ name, parts, x, y, ink, isVertical, side = 'above' }: PartProps)
   const value = parts[name]
   const Symbol = name.startsWith('R') ? Resistor : Capacitor
   const lines = [name, value ? valueOf(name, value) : 'not fitted']
-  const at = { above: { x, y: y - 23 }, below: { x, y: y + 22 }, right: { x: x + 15, y } }[side]
+  const at = { above: { x, y: y - 29 }, below: { x, y: y + 22 }, right: { x: x + 15, y } }[side]
   return (
     <G>
       <Symbol x={x} y={y} isVertical={isVertical ?? false} color={ink.color} ground={ink.ground} />
@@ -118,10 +118,10 @@ function Divider({ parts, hasLead, lower, ink }: NetworkProps & { readonly lower
   return (
     <G>
       <Wire color={ink.color} d={`M8 ${NODE.y}H${INPUT}`} />
-      <PlotText x={4} y={NODE.y - 8} color={ink.color}>
+      <PlotText x={2} y={NODE.y + 18} color={ink.color}>
         output
       </PlotText>
-      <Part name="R1" parts={parts} x={56} y={NODE.y} ink={ink} side="below" />
+      <Part name="R1" parts={parts} x={62} y={NODE.y} ink={ink} side="below" />
       {hasLead ? (
         <>
           <Wire color={ink.color} d={`M22 ${NODE.y}V92H${NODE.x}V${NODE.y}`} />

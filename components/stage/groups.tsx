@@ -87,6 +87,7 @@ export function BankFields({ index }: { readonly index: number }) {
     <Fields>
       <DraftField path={`outputCapacitors.${index}.count`} />
       <DraftField path={`outputCapacitors.${index}.capacitance`} />
+      <DraftField path={`outputCapacitors.${index}.biasDerating`} />
       <DraftField path={`outputCapacitors.${index}.esr`} />
     </Fields>
   )

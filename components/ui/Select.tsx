@@ -77,6 +77,14 @@ const styles = StyleSheet.create({
     borderRadius: 6,
   },
   list: { borderWidth: 1, borderRadius: 6, paddingVertical: space.xs, minWidth: 120, zIndex: 20 },
-  item: { minHeight: TARGET, justifyContent: 'center', paddingHorizontal: space.md },
+  // This style reaches a plain element of the page, which knows neither shorthands nor the flex of a view.
+  item: {
+    display: 'flex',
+    flexDirection: 'column',
+    minHeight: TARGET,
+    justifyContent: 'center',
+    paddingLeft: space.md,
+    paddingRight: space.md,
+  },
   itemText: { fontFamily: fonts.value, fontSize: sizes.body },
 })

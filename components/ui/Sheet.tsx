@@ -13,10 +13,13 @@ export interface SheetProps {
   readonly children: ReactNode
 }
 
+/** Share of the window's height that a sheet may take: what it speaks of stays in sight. */
+const TALLEST = 0.86
+
 /** Rises from below on a phone, stands in the middle of a wide screen. Escape, the cross and a press outside close it. */
 export function Sheet({ title, isOpen, onClose, children }: SheetProps) {
   const theme = useTheme()
-  const { isWide } = useLayout()
+  const { isWide, height } = useLayout()
   return (
     <Dialog.Root open={isOpen} onOpenChange={(open) => (open ? undefined : onClose())}>
       <Dialog.Portal>
@@ -32,6 +35,7 @@ export function Sheet({ title, isOpen, onClose, children }: SheetProps) {
             style={StyleSheet.flatten([
               styles.content,
               isWide ? styles.middle : styles.bottom,
+              { maxHeight: TALLEST * height },
               { backgroundColor: theme.paper, borderColor: theme.rule },
             ])}
           >
@@ -56,8 +60,8 @@ export function Sheet({ title, isOpen, onClose, children }: SheetProps) {
 const styles = StyleSheet.create({
   overlay: { position: 'absolute', top: 0, bottom: 0, left: 0, right: 0, alignItems: 'center', zIndex: 10 },
   content: { width: '100%', maxWidth: 560, borderWidth: 1 },
-  bottom: { maxHeight: '86%', borderTopLeftRadius: 14, borderTopRightRadius: 14 },
-  middle: { maxHeight: '86%', borderRadius: 10 },
+  bottom: { borderTopLeftRadius: 14, borderTopRightRadius: 14 },
+  middle: { borderRadius: 10 },
   head: {
     flexDirection: 'row',
     alignItems: 'center',

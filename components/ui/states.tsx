@@ -75,7 +75,7 @@ export function Loading({ label, bars }: { readonly label: string; readonly bars
 }
 
 const styles = StyleSheet.create({
-  middle: { alignItems: 'flex-start', gap: space.md, padding: space.xl, maxWidth: 560 },
+  middle: { alignItems: 'flex-start', gap: space.md, maxWidth: 560 },
   fault: { borderWidth: 1, borderRadius: 8, padding: space.lg, gap: space.sm },
   left: { alignSelf: 'flex-start' },
   bars: { gap: space.md },

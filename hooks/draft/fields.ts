@@ -23,7 +23,13 @@ const FIELDS: Readonly<Record<string, FieldSpec>> = {
   'outputCapacitors.*.capacitance': {
     label: 'Capacitance, each',
     unit: 'F',
-    hint: 'As it is under DC bias',
+    hint: 'As printed, without bias',
+  },
+  'outputCapacitors.*.biasDerating': {
+    label: 'Lost to DC bias',
+    unit: '%',
+    hint: 'At the output voltage, from the data sheet',
+    mayBeEmpty: true,
   },
   'outputCapacitors.*.esr': { label: 'ESR, each', unit: 'Ω' },
   'switch.onResistance': { label: 'Switch on-resistance', unit: 'Ω' },
