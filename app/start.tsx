@@ -64,5 +64,5 @@ const styles = StyleSheet.create({
   side: { width: '44%', gap: space.xl },
   below: { gap: space.xl },
   samples: { gap: space.md },
-  left: { alignSelf: 'flex-start' },
+  left: { alignSelf: 'flex-start', marginLeft: -space.sm },
 })

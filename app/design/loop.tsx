@@ -17,11 +17,11 @@ import { Card } from '@/components/ui/Card'
 import { Notice } from '@/components/ui/Notice'
 import { Loading } from '@/components/ui/states'
 import { Text } from '@/components/ui/Text'
-import type { Analysis, Loop } from '@/converters/results'
 import { useDraft } from '@/hooks/draft/useDraft'
 import { useCornersQuery } from '@/hooks/queries/corners'
 import { useDesignAnalysis } from '@/hooks/useDesignAnalysis'
 import { useProposals } from '@/hooks/useProposals'
+import type { Analysis } from '@/server/contract/analyses'
 
 export default function LoopScreen() {
   const hasNetwork = useDraft().design.compensator != null
@@ -138,6 +138,8 @@ function ClosedLoop() {
     />
   )
 }
+
+type Loop = NonNullable<Analysis['loop']>
 
 function LoopDetails({ analysis, loop }: { readonly analysis: Analysis; readonly loop: Loop }) {
   return (

@@ -27,6 +27,7 @@ function Hazard({ message }: { readonly message: string }) {
 const TITLES: Readonly<Record<Warning['code'], string>> = {
   'subharmonic-oscillation': 'Subharmonic oscillation',
   'unstable-orbit': 'The stage does not repeat from period to period',
+  'unstable-switching': 'The switched loop does not hold still',
   'unstable-loop': 'The closed loop is unstable',
   'models-part': 'The two models part',
   'conduction-not-modelled': 'Outside what is computed',
@@ -39,7 +40,12 @@ const TITLES: Readonly<Record<Warning['code'], string>> = {
   'hazardous-voltage': 'Hazardous voltage',
 }
 
-const FAULTS: readonly Warning['code'][] = ['subharmonic-oscillation', 'unstable-orbit', 'unstable-loop']
+const FAULTS: readonly Warning['code'][] = [
+  'subharmonic-oscillation',
+  'unstable-orbit',
+  'unstable-loop',
+  'unstable-switching',
+]
 
 /** What the computation itself points at. */
 export function Warnings({ warnings }: { readonly warnings: readonly Warning[] }) {

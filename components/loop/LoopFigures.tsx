@@ -2,7 +2,7 @@ import { figure, modulusVerdict, ratio, verdictOf } from '@/components/format'
 import { Figure } from '@/components/ui/Figure'
 import { FigureGrid } from '@/components/ui/FigureGrid'
 import { formatQuantity } from '@/converters/quantities'
-import type { CornerSet, Margins } from '@/converters/results'
+import type { Corner, CornerSet, Margins } from '@/converters/results'
 import { formatEntry } from '@/hooks/draft/entries'
 import type { DesignDocument } from '@/converters/document'
 
@@ -15,6 +15,7 @@ export interface LoopFiguresProps {
 /** Crossover and margins, each with its verdict, and the worst corner behind them. */
 export function LoopFigures({ margins, corners, targets }: LoopFiguresProps) {
   const worst = corners?.corners[corners.worst]
+  const least = leastGainMargin(corners)
   const unstable = margins.isStable ? undefined : 'unstable'
   return (
     <FigureGrid least={150}>
@@ -43,12 +44,28 @@ export function LoopFigures({ margins, corners, targets }: LoopFiguresProps) {
         verdict={
           worst && (worst.margins.isStable ? verdictOf(worst.margins.phaseMargin, targets.phaseMargin, '°') : 'short')
         }
-        note={
-          worst
-            ? `${formatQuantity(worst.lineVoltage, 'V')}, ${formatQuantity(worst.outputCurrent, 'A')}`
-            : 'over line and load'
-        }
+        note={worst ? cornerName(worst) : 'over line and load'}
+      />
+      <Figure
+        label="Gain margin, worst corner"
+        value={least ? figure(least.margins.gainMargin, 'dB') : corners ? 'none' : '…'}
+        verdict={least && verdictOf(least.margins.gainMargin, targets.gainMargin, 'dB')}
+        note={least ? cornerName(least) : 'over line and load'}
       />
     </FigureGrid>
   )
+}
+
+/** The corner whose gain margin is the smallest; undefined where no corner has one. */
+function leastGainMargin(corners: CornerSet | undefined): Corner | undefined {
+  return corners?.corners
+    .filter((corner) => corner.margins.gainMargin !== null)
+    .reduce<Corner | undefined>(
+      (least, corner) => ((least?.margins.gainMargin ?? Infinity) <= (corner.margins.gainMargin ?? 0) ? least : corner),
+      undefined,
+    )
+}
+
+function cornerName({ lineVoltage, outputCurrent }: Corner): string {
+  return `${formatQuantity(lineVoltage, 'V')}, ${formatQuantity(outputCurrent, 'A')}`
 }

@@ -2,10 +2,11 @@ import { useMemo } from 'react'
 import { figure } from '@/components/format'
 import { BodePlot } from '@/components/plots/BodePlot'
 import { bandOf, type BodeCurve } from '@/components/plots/bode'
-import type { CornerSet, Loop, Margins } from '@/converters/results'
+import type { CornerSet, Margins } from '@/converters/results'
+import type { Analysis } from '@/server/contract/analyses'
 
 export interface LoopPlotProps {
-  readonly loop: Loop
+  readonly loop: NonNullable<Analysis['loop']>
   readonly margins: Margins
   readonly corners: CornerSet | undefined
   readonly frequencies: readonly number[]

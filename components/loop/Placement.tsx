@@ -114,4 +114,4 @@ export function PlacementFields({ placement }: { readonly placement: Placement }
   )
 }
 
-const styles = StyleSheet.create({ left: { alignSelf: 'flex-start' }, group: { gap: space.sm } })
+const styles = StyleSheet.create({ left: { alignSelf: 'flex-start', marginLeft: -space.sm }, group: { gap: space.sm } })

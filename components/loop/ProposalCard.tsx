@@ -119,7 +119,7 @@ function Reasons({ reasons, name }: { readonly reasons: readonly string[]; reado
   const [isOpen, setOpen] = useState(false)
   return (
     <>
-      <View style={styles.left}>
+      <View style={styles.flush}>
         <Button
           kind="quiet"
           label={isOpen ? 'Hide the reasons' : 'Show the reasons'}
@@ -146,4 +146,5 @@ const styles = StyleSheet.create({
   card: { borderWidth: 1, borderRadius: 8, padding: space.md, gap: space.sm },
   worst: { flexDirection: 'row', gap: space.sm, alignItems: 'baseline', flexWrap: 'wrap' },
   left: { alignSelf: 'flex-start' },
+  flush: { alignSelf: 'flex-start', marginLeft: -space.sm },
 })

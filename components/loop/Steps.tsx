@@ -5,7 +5,8 @@ import { Figure } from '@/components/ui/Figure'
 import { FigureGrid } from '@/components/ui/FigureGrid'
 import { Loading } from '@/components/ui/states'
 import { Text } from '@/components/ui/Text'
-import type { Analysis, Mode, StepResponse } from '@/converters/results'
+import type { Mode, StepResponse } from '@/converters/results'
+import type { Analysis } from '@/server/contract/analyses'
 
 // Its drawing library is as large as the rest of the screens together: it comes when a step is to be drawn.
 const StepPlot = lazy(() => import('@/components/plots/StepPlot'))

@@ -4,7 +4,8 @@ import { BodePlot } from '@/components/plots/BodePlot'
 import { interpolate, type BodeCurve } from '@/components/plots/bode'
 import { Choice } from '@/components/ui/Choice'
 import { Text } from '@/components/ui/Text'
-import type { Analysis, ModelPair, ResponseCurve } from '@/converters/results'
+import type { ModelPair, ResponseCurve } from '@/converters/results'
+import type { Analysis } from '@/server/contract/analyses'
 
 type ResponseName = keyof Analysis['responses']
 

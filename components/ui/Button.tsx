@@ -39,7 +39,13 @@ export function Button({ onPress, ...look }: ButtonProps) {
       aria-label={look.spoken ?? (look.iconOnly ? look.label : undefined)}
       disabled={look.isDisabled}
       onPress={onPress}
-      style={[styles.box, look.iconOnly && styles.iconOnly, box, look.isDisabled && styles.disabled]}
+      style={[
+        styles.box,
+        look.kind === 'quiet' && styles.quiet,
+        look.iconOnly && styles.iconOnly,
+        box,
+        look.isDisabled && styles.disabled,
+      ]}
       {...pressed}
     >
       <Face {...look} />
@@ -55,7 +61,12 @@ export function LinkButton({ href, ...look }: ButtonLook & { readonly href: Href
       <Pressable
         role="link"
         aria-label={look.spoken}
-        style={StyleSheet.flatten([styles.box, look.iconOnly && styles.iconOnly, box])}
+        style={StyleSheet.flatten([
+          styles.box,
+          look.kind === 'quiet' && styles.quiet,
+          look.iconOnly && styles.iconOnly,
+          box,
+        ])}
       >
         <Face {...look} />
       </Pressable>
@@ -88,6 +99,7 @@ const styles = StyleSheet.create({
     justifyContent: 'center',
     alignItems: 'center',
   },
+  quiet: { paddingHorizontal: space.sm },
   iconOnly: { paddingHorizontal: 0 },
   face: { flexDirection: 'row', alignItems: 'center', gap: space.sm },
   disabled: { opacity: 0.5 },
