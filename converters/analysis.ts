@@ -12,6 +12,7 @@ import { openPlant, rightHalfPlaneZero, type OpenPlant, type PlantPoint } from '
 import { closeLoop, type ClosedLoopSystem } from './loop/closedLoop'
 import { readMargins } from './loop/margins'
 import { stepResponse } from './loop/stepResponse'
+import { closedLoopMap } from './simulation/closedOrbit'
 import { describeNetworkRoots } from './loop/networkRoles'
 import { describeRoots } from './roots'
 import type { Analysis, Loop, Margins, ModelPair, ResponseCurve } from './results'
@@ -41,7 +42,7 @@ export function analyseDesign(design: DesignDocument, options: AnalysisOptions =
     outputImpedance: mapPair(raw.outputImpedance, curve),
   }
   const closed = network && closeLoop(plant.model, networkStateSpace(network))
-  const loop = network && closed && describeLoop(network, closed, frequencies, raw)
+  const loop = network && closed && describeLoop(plant, network, closed, frequencies, raw)
   const margins = network && marginsOf(plant, network, 'switched')
   const averagedMargins = network && marginsOf(plant, network, 'averaged')
   // The steps come from the averaged model, so it has to settle too.
@@ -137,6 +138,7 @@ export function curve(values: readonly Complex[]): ResponseCurve {
 }
 
 function describeLoop(
+  plant: OpenPlant,
   network: Network,
   closed: ClosedLoopSystem,
   frequencies: readonly number[],
@@ -155,6 +157,7 @@ function describeLoop(
     compensator: curve(gains),
     ...describeNetworkRoots(network, poles, zeros),
     closedLoopPoles: describeRoots(eigenvalues(closed.A), () => 'loop'),
+    periodMap: closedLoopMap(plant.circuit, plant.orbit, network),
     closedLoop: { lineToOutput: suppressed(raw.lineToOutput), outputImpedance: suppressed(raw.outputImpedance) },
   }
 }

@@ -2,8 +2,8 @@
  * The power stage of a design at one line voltage and load current, as one linear circuit an interval: the switch on,
  * the rectifier conducting, and (where conduction can stop) neither.
  */
-import type { DesignDocument } from './document'
-import { GROUND, reduceNetwork, type Element, type Measure } from './network'
+import { effectiveCapacitance, type DesignDocument } from './document'
+import { GROUND, INPUTS, reduceNetwork, type Element, type Measure } from './network'
 import { TOPOLOGY_DEFINITIONS } from './topologies'
 import type { TopologyDefinition } from './topologies/topology'
 
@@ -38,8 +38,10 @@ export interface Circuit {
   readonly stoppingState: number
   /** With one inductor, discontinuous conduction can be computed; with more it is only detected. */
   readonly canStop: boolean
-  /** Constant inputs: line voltage, load source current, rectifier drop. */
-  readonly inputs: readonly [number, number, number]
+  /** Constant inputs: line voltage, load source current, rectifier drop, and what a closed loop adds. */
+  readonly inputs: readonly number[]
+  /** How much of the control voltage comes from states and inputs, as rows; nothing while the loop is open. */
+  readonly control: { readonly overStates: readonly number[]; readonly overInputs: readonly number[] }
   readonly on: Interval
   readonly off: Interval
   readonly idle: Interval
@@ -94,6 +96,7 @@ export function buildCircuit(design: DesignDocument, lineVoltage: number, output
     stoppingState: 0,
     canStop: topology.inductors.length === 1,
     inputs: [lineVoltage, load.current, design.rectifier.forwardVoltage],
+    control: { overStates: states.map(() => 0), overInputs: INPUTS.map(() => 0) },
     on: reduce([...common, ...topology.on(design)]),
     off: reduce([...common, ...topology.off(design)]),
     // With no current there is no voltage across the inductor, so it reads as a plain connection and its state stands.
@@ -108,10 +111,10 @@ function connection({ name, from, to }: { name: string; from: string; to: string
 
 /** Banks without ESR sit on the same voltage, so together they are one state; every other bank is its own. */
 function mergeBanks(design: DesignDocument): Circuit['outputStates'] {
-  const pieces = design.outputCapacitors.map(({ count, capacitance, esr }, bank) => ({
-    capacitance: count * capacitance,
-    esr: esr / count,
-    banks: [bank],
+  const pieces = design.outputCapacitors.map((bank, index) => ({
+    capacitance: bank.count * effectiveCapacitance(bank),
+    esr: bank.esr / bank.count,
+    banks: [index],
   }))
   const ideal = pieces.filter((piece) => piece.esr === 0)
   const real = pieces.filter((piece) => piece.esr > 0)
@@ -121,7 +124,10 @@ function mergeBanks(design: DesignDocument): Circuit['outputStates'] {
 }
 
 /** The load as a conductance in parallel with a current source, linear about the mean output voltage. */
-function linearLoad({ load, output }: DesignDocument, current: number): { conductance: number; current: number } {
+export function linearLoad(
+  { load, output }: DesignDocument,
+  current: number,
+): { conductance: number; current: number } {
   switch (load) {
     case 'resistive':
       return { conductance: current / output.voltage, current: 0 }

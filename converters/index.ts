@@ -1,8 +1,10 @@
 /** What the rest of the product may use of the engine. Every function takes unchecked input and names what is wrong. */
 import { analyseDesign, type AnalysisOptions } from './analysis'
 import { cornersOf, type CornerOptions } from './corners'
-import { parseDesign } from './parse'
-import type { Analysis, CornerSet } from './results'
+import { invalid, parseDesign, problemsOf } from './parse'
+import { simulateLoop } from './simulation/simulate'
+import { SimulationOptions, type SimulationOptionsInput } from './simulation/scenario'
+import type { Analysis, CornerSet, Simulation } from './results'
 
 /** Operating point, poles and zeros, responses, loop, margins and step responses at one line voltage and load. */
 export function analyse(design: unknown, options: AnalysisOptions = {}): Analysis {
@@ -16,6 +18,14 @@ export function analyseCorners(design: unknown, options: CornerOptions = {}): Co
 
 export { proposeCompensator } from './compensators/propose'
 export { proposeStage } from './quickStart'
+/** The closed loop cycle by cycle through one scenario, with its period map and the loop gain that includes ripple. */
+export function simulate(design: unknown, options: SimulationOptionsInput = {}): Simulation {
+  const document = parseDesign(design)
+  const checked = SimulationOptions.safeParse(options)
+  if (!checked.success) throw invalid(problemsOf(checked.error))
+  return simulateLoop(document, checked.data)
+}
+
 export { ENGINE_VERSION } from './version'
 export { DesignError, type DesignErrorCode, type FieldProblem } from './errors'
 export * from './document'

@@ -102,6 +102,16 @@ export interface PeriodMap {
   readonly slopeNeeded: number | null
 }
 
+/** The closed loop as it switches: comparator, ripple and network in one period map. */
+export interface ClosedLoopMap {
+  readonly multipliers: PeriodMap['multipliers']
+  readonly isStable: boolean
+  readonly controlRipple: number // V peak to peak that the network lets through to the comparator
+  readonly rampSpan: number // V that the comparator's other input rises by during the pulse
+  /** The ripple makes the comparator fire before the pulse should end. */
+  readonly firesEarly: boolean
+}
+
 export interface Crossing {
   readonly frequency: number // Hz
   readonly gainDb: number
@@ -132,6 +142,8 @@ export interface Loop {
   readonly compensatorPoles: readonly Root[]
   readonly compensatorZeros: readonly Root[]
   readonly closedLoopPoles: readonly Root[] // averaged model with its network
+  /** Stability of the switched loop itself, ripple at the comparator included. */
+  readonly periodMap: ClosedLoopMap
   readonly closedLoop: {
     readonly lineToOutput: ModelPair<ResponseCurve>
     readonly outputImpedance: ModelPair<ResponseCurve>
@@ -155,10 +167,41 @@ export interface StepResponse {
   readonly modes: readonly Mode[] // largest first
 }
 
+/** Read off a simulated transient; deviations are of the mean over a period from the wanted output. */
+export interface TransientReadings {
+  readonly peakDeviation: number // V, signed
+  readonly peakTime: number // s after the disturbance
+  readonly recoveryTime: number | null // s until within a tenth of the peak for good; null if not in the run
+  readonly ringingFrequency: number | null // Hz; null where the output does not swing back
+  readonly decayTimeConstant: number | null // s; null where it does not ring or does not decay
+  readonly restDeviation: number // V, largest distance from rest in the last periods
+  /** The duty goes up and down from one period to the next at the end: oscillation at half the switching frequency. */
+  readonly alternates: boolean
+}
+
+/** One value a period in every list. */
+export interface Simulation {
+  readonly map: ClosedLoopMap
+  /** As an analyser reads it on the running converter; null where the orbit is not the one that runs. */
+  readonly loopWithRipple: { readonly frequencies: readonly number[]; readonly response: ResponseCurve } | null
+  readonly disturbedAt: number // s
+  readonly time: readonly number[] // s, middle of the period
+  readonly meanOutput: readonly number[] // V
+  readonly lowestOutput: readonly number[] // V
+  readonly highestOutput: readonly number[] // V
+  readonly peakCurrent: readonly number[] // A, inductor
+  readonly control: readonly number[] // V, at the period's end
+  readonly duty: readonly number[]
+  readonly readings: TransientReadings
+  /** The averaged model's answer to the same step; null for other disturbances and where it does not settle. */
+  readonly prediction: StepResponse | null
+}
+
 export type WarningCode =
   | 'subharmonic-oscillation'
   | 'unstable-orbit'
   | 'unstable-loop'
+  | 'unstable-switching' // the averaged margins do not show it: ripple at the comparator, or subharmonic oscillation
   | 'models-part' // averaged and switched differ by more than 1 dB or 10° below twice the crossover
   | 'duty-near-limit'
   | 'conduction-not-modelled' // the rectifier's current would reverse where only continuous conduction is computed

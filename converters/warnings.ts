@@ -13,6 +13,7 @@ type Computed = Omit<Analysis, 'warnings'>
 export function warningsFor(design: DesignDocument, analysis: Computed, rightHalfPlaneZero: number | null): Warning[] {
   return [
     ...orbitWarnings(analysis),
+    ...switchingWarnings(analysis),
     ...marginWarnings(design, analysis, rightHalfPlaneZero),
     ...modelWarnings(analysis),
     ...stageWarnings(design, analysis),
@@ -41,6 +42,25 @@ function orbitWarnings({ periodMap }: Computed): Warning[] {
       code: 'subharmonic-oscillation',
       message: `The inductor current alternates from period to period: it oscillates at half the switching frequency. ${cure}`,
       field: 'modulator.slopeCompensation',
+    },
+  ]
+}
+
+/** The averaged margins are fine, and the switched loop is not. */
+function switchingWarnings({ loop, margins, periodMap }: Computed): Warning[] {
+  if (!loop || loop.periodMap.isStable || !margins?.isStable || !periodMap.isStable) return []
+  const { controlRipple, rampSpan, firesEarly, multipliers } = loop.periodMap
+  const ripple = `The network lets ${round(controlRipple)} V of output ripple through to the comparator, whose other input rises by ${round(rampSpan)} V during the pulse`
+  const what = firesEarly
+    ? 'so the comparator fires before the pulse should end'
+    : multipliers.some((m) => m.modulus >= 1 && m.real < 0)
+      ? 'and the pulses alternate between long and short: an oscillation at half the switching frequency'
+      : 'and a disturbance of the switching instants grows from period to period'
+  return [
+    {
+      code: 'unstable-switching',
+      message: `The margins look fine, yet the switched loop is unstable. ${ripple}, ${what}. Less gain at the switching frequency (a lower last pole or a larger C2), a larger ramp or less output ripple cures it.`,
+      field: 'compensator',
     },
   ]
 }
@@ -139,7 +159,7 @@ function stageWarnings(design: DesignDocument, { operatingPoint }: Computed): Wa
   if (highest > EXTRA_LOW_VOLTAGE) {
     warnings.push({
       code: 'hazardous-voltage',
-      message: `A node reaches ${round(highest)} V, above ${EXTRA_LOW_VOLTAGE} V DC. Isolation, creepage and stored charge need care; use injection equipment rated and isolated for the node; work by qualified people under the local electrical safety code.`,
+      message: `A node reaches ${round(highest)} V, above ${EXTRA_LOW_VOLTAGE} V DC.`,
       field: null,
     })
   }

@@ -42,11 +42,12 @@ export function discontinuousModel(circuit: Circuit, dutyCycle: number, rest: Fl
   const overStates = Array.from(rest, (value, j) =>
     slope(value, (offset) => at(moved(rest, j, offset), circuit.inputs, control)),
   )
-  const [line, load, drop] = circuit.inputs
+  const [line, load] = circuit.inputs as [number, number]
+  const withInput = (input: number, value: number) => circuit.inputs.map((old, k) => (k === input ? value : old))
   const overInputs = [
     slope(control, (offset) => at(rest, circuit.inputs, control + offset)),
-    slope(line, (offset) => at(rest, [line + offset, load, drop], control)),
-    slope(circuit.outputCurrent, (offset) => at(rest, [line, load + offset, drop], control)),
+    slope(line, (offset) => at(rest, withInput(0, line + offset), control)),
+    slope(circuit.outputCurrent, (offset) => at(rest, withInput(1, load + offset), control)),
   ]
   return {
     A: Array.from({ length: n }, (_, i) => overStates.map((s) => s.state[i]!)),
@@ -63,7 +64,7 @@ const moved = (x: ArrayLike<number>, j: number, offset: number): Float64Array =>
 }
 
 /** Time derivatives and output, averaged over a period with switch duty d₁. */
-function averages(circuit: Circuit, x: ArrayLike<number>, inputs: readonly number[], duty: number): Averages {
+export function averages(circuit: Circuit, x: ArrayLike<number>, inputs: readonly number[], duty: number): Averages {
   const { on, off, idle, period, stoppingState } = circuit
   const mean = x[stoppingState]!
   const rise = risingSlope(circuit, x, inputs)

@@ -21,6 +21,9 @@ const NEEDED: Readonly<Record<CompensatorType, readonly CompensatorPart[]>> = {
 }
 
 export type CompensatorChoice = NonNullable<DesignDocument['compensator']>
+/** F, of a node without a capacitor; common practice, no source. */
+const STRAY_CAPACITANCE = 1e-12
+
 /** What of a design decides the amplifier and its divider. */
 export type AmplifierSetting = Pick<DesignDocument, 'amplifier' | 'sense' | 'output'>
 
@@ -102,4 +105,14 @@ export function networkRoots(network: Network): { readonly poles: Complex[]; rea
       D[0]![0]!,
     ),
   }
+}
+
+/**
+ * The network as a simulation takes it, and which of its states is the amplifier's output: the one that stands still at a
+ * limit. Where no capacitor holds a transconductance amplifier's output, the node's own stray capacitance does.
+ */
+export function networkWithHeldOutput(network: Network): { readonly network: Network; readonly outputState: number } {
+  if (network.kind === 'op-amp') return { network, outputState: networkStateSpace(network).A.length - 1 }
+  if (network.type === 'I') return { network, outputState: 0 }
+  return { network: { ...network, C2: network.C2 || STRAY_CAPACITANCE }, outputState: 1 }
 }

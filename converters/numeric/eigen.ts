@@ -13,7 +13,7 @@ const ROUND_OFF = 1e-12
  * loses no digit.
  * @returns the scale of each state: A[i][j]·scale[j]/scale[i] is the balanced matrix.
  */
-function balancingScale(A: readonly (readonly number[])[]): number[] {
+export function balancingScale(A: readonly (readonly number[])[]): number[] {
   const n = A.length
   const scale = new Array<number>(n).fill(1)
   for (let changed = true, sweep = 0; changed && sweep < 60; sweep++) {

@@ -51,20 +51,15 @@ export function eventsOf(circuit: Circuit, orbit: Orbit): SwitchingEvent[] {
   })
 }
 
-/** Ramp against control voltage, or sensed switch current plus slope compensation against it. */
-function comparatorSurface({ design: { modulator }, on, period }: Circuit) {
-  if (modulator.kind === 'voltage-mode') {
-    return {
-      stateGradient: new Float64Array(on.A.length),
-      inputGradient: new Float64Array(on.B[0]!.length),
-      ownRate: modulator.rampAmplitude / period,
-    }
-  }
-  const sensed = (row: readonly number[]) => Float64Array.from(row, (value) => value * modulator.currentSenseResistance)
+/** Ramp, or sensed switch current plus slope compensation, minus what the control voltage follows by itself. */
+function comparatorSurface({ design: { modulator }, on, period, control }: Circuit) {
+  const resistance = modulator.kind === 'voltage-mode' ? 0 : modulator.currentSenseResistance
+  const against = (sensed: readonly number[], followed: readonly number[]) =>
+    Float64Array.from(followed, (value, j) => (sensed[j] ?? 0) * resistance - value)
   return {
-    stateGradient: sensed(on.C[MEASURES.switchCurrent]!),
-    inputGradient: sensed(on.D[MEASURES.switchCurrent]!),
-    ownRate: modulator.slopeCompensation,
+    stateGradient: against(on.C[MEASURES.switchCurrent]!, control.overStates),
+    inputGradient: against(on.D[MEASURES.switchCurrent]!, control.overInputs),
+    ownRate: modulator.kind === 'voltage-mode' ? modulator.rampAmplitude / period : modulator.slopeCompensation,
   }
 }
 

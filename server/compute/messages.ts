@@ -3,12 +3,14 @@ import type { DesignErrorCode, FieldProblem } from '@/converters/errors'
 import type { AnalysisRequest } from '@/server/contract/analyses'
 import type { CompensatorsRequest } from '@/server/contract/compensators'
 import type { CornersRequest } from '@/server/contract/corners'
+import type { SimulationRequest } from '@/server/contract/simulations'
 import type { StageProposalRequest } from '@/server/contract/stageProposals'
 
 export interface TaskInputs {
   readonly analysis: AnalysisRequest
   readonly corners: CornersRequest
   readonly compensators: CompensatorsRequest
+  readonly simulation: SimulationRequest
   readonly stageProposal: StageProposalRequest
 }
 export type TaskName = keyof TaskInputs

@@ -3,6 +3,9 @@ import type { TaskName } from '@/server/compute/messages'
 
 const DESIGN_SECTIONS = new Set(Object.keys(DesignDocument.shape))
 
+/** Tasks whose request carries the engine's options apart from the design. */
+const HAS_OPTIONS: ReadonlySet<TaskName> = new Set(['compensators', 'simulation'])
+
 /**
  * The engine names a field by its path in the design or in the options, `outputCapacitors[0].esr`; the API by its path in
  * the request, `design.outputCapacitors.0.esr`.
@@ -13,5 +16,5 @@ export function requestField(task: TaskName, engineField: string): string {
   if (task === 'stageProposal') return path === '' ? 'requirements' : `requirements.${path}`
   if (path === '') return 'design'
   if (DESIGN_SECTIONS.has(section)) return `design.${path}`
-  return task === 'compensators' && section !== 'options' ? `options.${path}` : path
+  return HAS_OPTIONS.has(task) && section !== 'options' ? `options.${path}` : path
 }

@@ -1,11 +1,12 @@
-import { analyse, analyseCorners, proposeCompensator, proposeStage } from '@/converters'
+import { analyse, analyseCorners, proposeCompensator, proposeStage, simulate } from '@/converters'
 import type { TaskRequest } from '@/server/compute/messages'
 import type { Analysis } from '@/server/contract/analyses'
 import type { CompensatorProposals } from '@/server/contract/compensators'
 import type { CornerSet } from '@/server/contract/corners'
+import type { Simulation } from '@/server/contract/simulations'
 import type { StageProposal } from '@/server/contract/stageProposals'
 
-type Answer = Analysis | CornerSet | CompensatorProposals | StageProposal
+type Answer = Analysis | CornerSet | CompensatorProposals | Simulation | StageProposal
 
 /** Runs one task on the engine. The return type holds the engine to the contract. @throws DesignError */
 export function compute(request: TaskRequest): Answer {
@@ -21,6 +22,10 @@ export function compute(request: TaskRequest): Answer {
     case 'compensators': {
       const { design, options } = request.input
       return proposeCompensator(design, options) satisfies CompensatorProposals
+    }
+    case 'simulation': {
+      const { design, options } = request.input
+      return simulate(design, options) satisfies Simulation
     }
     case 'stageProposal':
       return proposeStage(request.input.requirements) satisfies StageProposal

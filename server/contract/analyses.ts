@@ -37,7 +37,10 @@ const OperatingPoint = z.object({
   switchCurrent: CurrentFigures,
   rectifierCurrent: CurrentFigures,
   outputCapacitorRmsCurrent: z.array(z.number()).readonly().describe('A, one for each bank'),
-  switchVoltage: z.number().nullable().describe('V, the highest while open; null where it hangs on a part not described'),
+  switchVoltage: z
+    .number()
+    .nullable()
+    .describe('V, the highest while open; null where it hangs on a part not described'),
   rectifierVoltage: z.number().describe('V, the highest reverse voltage'),
   boundaryCurrent: z.number().nullable().describe('A of load at which conduction becomes discontinuous'),
   controlVoltage: z.number().describe('V at the comparator when the switch turns off'),
@@ -65,10 +68,21 @@ const ClosedForm = z.object({
   source: z.string(),
 })
 
+const Multipliers = z.array(z.object({ real: z.number(), imaginary: z.number(), modulus: z.number() })).readonly()
+
 const PeriodMap = z.object({
-  multipliers: z.array(z.object({ real: z.number(), imaginary: z.number(), modulus: z.number() })).readonly(),
+  multipliers: Multipliers,
   isStable: z.boolean(),
   slopeNeeded: z.number().nullable().describe('V/s of slope compensation from which the orbit is stable'),
+})
+
+/** Stability of the switched loop itself, ripple at the comparator included. */
+export const ClosedLoopMap = z.object({
+  multipliers: Multipliers,
+  isStable: z.boolean(),
+  controlRipple: z.number().describe('V peak to peak that the network lets through to the comparator'),
+  rampSpan: z.number().describe("V that the comparator's other input rises by during the pulse"),
+  firesEarly: z.boolean().describe('The ripple makes the comparator fire before the pulse should end.'),
 })
 
 const Loop = z.object({
@@ -77,6 +91,7 @@ const Loop = z.object({
   compensatorPoles: Roots,
   compensatorZeros: Roots,
   closedLoopPoles: Roots,
+  periodMap: ClosedLoopMap,
   closedLoop: z.object({ lineToOutput: CurvePair, outputImpedance: CurvePair }),
 })
 
@@ -86,7 +101,7 @@ const Mode = z.object({
   amplitude: z.number().describe('V'),
 })
 
-const StepResponse = z.object({
+export const StepResponse = z.object({
   size: z.number().describe('A for the load step, V for the line step'),
   time: z.array(z.number()).readonly().describe('s'),
   outputDeviation: z.array(z.number()).readonly().describe('V'),
@@ -101,6 +116,7 @@ const Warning = z.object({
     'subharmonic-oscillation',
     'unstable-orbit',
     'unstable-loop',
+    'unstable-switching',
     'models-part',
     'duty-near-limit',
     'conduction-not-modelled',

@@ -6,6 +6,7 @@ import { CompensatorProposals, CompensatorsRequest } from '@/server/contract/com
 import { CornerSet, CornersRequest } from '@/server/contract/corners'
 import type { ProblemCode } from '@/server/contract/problems'
 import { Sample, SampleList, SampleSlug } from '@/server/contract/samples'
+import { Simulation, SimulationRequest } from '@/server/contract/simulations'
 import { StageProposal, StageProposalRequest } from '@/server/contract/stageProposals'
 
 export const API_ROOT = '/api/v1'
@@ -69,6 +70,19 @@ export const ENDPOINTS: readonly Endpoint[] = [
     summary: 'Proposes a whole power stage from line, output and frequency, with the reason for every choice.',
     request: { name: 'StageProposalRequest', schema: StageProposalRequest },
     response: { name: 'StageProposal', schema: StageProposal, description: 'The design and its reasons.' },
+    problems: COMPUTE_PROBLEMS,
+  },
+  {
+    operation: 'simulateLoop',
+    method: 'post',
+    path: '/simulations',
+    summary: 'Runs the closed loop cycle by cycle through a load step, a line step, a soft start or an overload.',
+    request: { name: 'SimulationRequest', schema: SimulationRequest },
+    response: {
+      name: 'Simulation',
+      schema: Simulation,
+      description: 'The transient, what is read off it, and the period map.',
+    },
     problems: COMPUTE_PROBLEMS,
   },
   {

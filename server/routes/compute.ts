@@ -5,6 +5,7 @@ import type { TaskRequest } from '@/server/compute/messages'
 import { AnalysisRequest } from '@/server/contract/analyses'
 import { CompensatorsRequest } from '@/server/contract/compensators'
 import { CornersRequest } from '@/server/contract/corners'
+import { SimulationRequest } from '@/server/contract/simulations'
 import { StageProposalRequest } from '@/server/contract/stageProposals'
 import { methodNotAllowed } from '@/server/middleware/notFound'
 import { parse } from '@/server/middleware/parse'
@@ -28,6 +29,7 @@ export function computeRoutes(compute: ComputePool): Router {
   post('/analyses', (body) => ({ task: 'analysis', input: parse(AnalysisRequest, body) }))
   post('/corners', (body) => ({ task: 'corners', input: parse(CornersRequest, body) }))
   post('/compensators', (body) => ({ task: 'compensators', input: parse(CompensatorsRequest, body) }))
+  post('/simulations', (body) => ({ task: 'simulation', input: parse(SimulationRequest, body) }))
   post('/stage-proposals', (body) => ({ task: 'stageProposal', input: parse(StageProposalRequest, body) }))
   return router
 }

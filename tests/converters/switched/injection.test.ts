@@ -6,7 +6,6 @@ import { describe, expect, it } from 'vitest'
 import { analyse } from '@/converters'
 import {
   DesignDocument,
-  LOAD_KINDS,
   TOPOLOGIES,
   type DesignDocumentInput,
   type LoadKind,
