@@ -1,4 +1,5 @@
 import Head from 'expo-router/head'
+import { memo, useDeferredValue } from 'react'
 import { Caution, Warnings } from '@/components/design/Cautions'
 import { Columns } from '@/components/design/Columns'
 import { EntryNotice } from '@/components/design/EntryNotice'
@@ -98,6 +99,8 @@ function ClosedLoop() {
   const { analysis, error } = useDesignAnalysis()
   const corners = useCornersQuery(design)
   const { loop, margins } = analysis ?? {}
+  // Figures and curves come first; the drawings beside them may follow a moment later.
+  const details = useDeferredValue(analysis)
   return (
     <Columns
       phoneOrder={['curves', 'inputs', 'figures']}
@@ -134,14 +137,20 @@ function ClosedLoop() {
           )}
         </>
       }
-      figures={analysis && loop ? <LoopDetails analysis={analysis} loop={loop} /> : <Caution />}
+      figures={details?.loop ? <LoopDetails analysis={details} loop={details.loop} /> : <Caution />}
     />
   )
 }
 
 type Loop = NonNullable<Analysis['loop']>
 
-function LoopDetails({ analysis, loop }: { readonly analysis: Analysis; readonly loop: Loop }) {
+const LoopDetails = memo(function LoopDetails({
+  analysis,
+  loop,
+}: {
+  readonly analysis: Analysis
+  readonly loop: Loop
+}) {
   return (
     <>
       {analysis.steps ? (
@@ -158,7 +167,7 @@ function LoopDetails({ analysis, loop }: { readonly analysis: Analysis; readonly
       <Caution />
     </>
   )
-}
+})
 
 function loopRoots(analysis: Analysis, loop: Loop): PlaneRoot[] {
   return [

@@ -1,4 +1,4 @@
-import { useMemo, useState, useSyncExternalStore } from 'react'
+import { useState, useSyncExternalStore } from 'react'
 import { formatEntry, settle, shownEntry, type Problems } from './entries'
 import { fieldSpec, type FieldSpec } from './fields'
 import { readPath } from './paths'
@@ -23,8 +23,16 @@ export function useCanUndo(): boolean {
 
 /** What is wrong with the entries that are not part of the design yet, by path. */
 export function useEntryProblems(): Problems {
-  const { design, texts } = useDraft()
-  return useMemo(() => settle(design, texts).problems, [design, texts])
+  return problemsOf(useDraft())
+}
+
+const known = new WeakMap<Draft, Problems>()
+
+/** Found once for each state of the draft, however many entries ask. */
+function problemsOf(draft: Draft): Problems {
+  const problems = known.get(draft) ?? settle(draft.design, draft.texts).problems
+  known.set(draft, problems)
+  return problems
 }
 
 export interface EntryBinding {

@@ -1,4 +1,5 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query'
+import { useMemo } from 'react'
 import type { DesignDocument, OperatingPointRequest } from '@/converters/document'
 import { api } from '@/hooks/api'
 import { frequencyGrid } from '@/hooks/frequencyGrid'
@@ -6,11 +7,9 @@ import { Analysis, type AnalysisRequestInput } from '@/server/contract/analyses'
 
 /** One design at one operating point. The last answer stays in view while the next one is computed. */
 export function useAnalysisQuery(design: DesignDocument, operatingPoint: OperatingPointRequest) {
-  const request: AnalysisRequestInput = {
-    design: { ...design, name: undefined },
-    operatingPoint,
-    frequencies: frequencyGrid(design.switchingFrequency),
-  }
+  const { switchingFrequency } = design
+  const frequencies = useMemo(() => frequencyGrid(switchingFrequency), [switchingFrequency])
+  const request: AnalysisRequestInput = { design: { ...design, name: undefined }, operatingPoint, frequencies }
   return useQuery({
     queryKey: ['analyses', request],
     queryFn: ({ signal }) => api.post('/analyses', request, Analysis, signal),
