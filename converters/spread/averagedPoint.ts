@@ -129,4 +129,5 @@ function discontinuousRest(
   return null
 }
 
-const relative = (change: Float64Array, unknowns: Float64Array, i: number): number => Math.abs(change[i]! / unknowns[i]!)
+const relative = (change: Float64Array, unknowns: Float64Array, i: number): number =>
+  Math.abs(change[i]! / unknowns[i]!)

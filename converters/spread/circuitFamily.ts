@@ -89,7 +89,8 @@ function capacitorStates({ design, states, outputStates }: Circuit): CapacitorSt
 /** Banks that share a state have no ESR. */
 function bankValue({ outputCapacitors }: DesignDocument, banks: readonly number[]): CapacitorValue {
   let capacitance = 0
-  for (const index of banks) capacitance += outputCapacitors[index]!.count * effectiveCapacitance(outputCapacitors[index]!)
+  for (const index of banks)
+    capacitance += outputCapacitors[index]!.count * effectiveCapacitance(outputCapacitors[index]!)
   const first = outputCapacitors[banks[0]!]!
   return { capacitance, esr: first.esr / first.count }
 }

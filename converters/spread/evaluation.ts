@@ -123,7 +123,10 @@ function openSwitched(circuit: Circuit): Opened {
     shape: shapeOf(
       multipliers
         .filter(({ re, im }) => re !== 0 || im !== 0)
-        .map(({ re, im }) => ({ re: Math.log(Math.hypot(re, im)) / circuit.period, im: Math.atan2(im, re) / circuit.period })),
+        .map(({ re, im }) => ({
+          re: Math.log(Math.hypot(re, im)) / circuit.period,
+          im: Math.atan2(im, re) / circuit.period,
+        })),
     ),
   }
 }

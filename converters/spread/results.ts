@@ -85,7 +85,13 @@ export interface Distribution {
   readonly standardDeviation: number
   readonly minimum: number
   readonly maximum: number
-  readonly quantiles: { readonly p01: number; readonly p05: number; readonly p50: number; readonly p95: number; readonly p99: number }
+  readonly quantiles: {
+    readonly p01: number
+    readonly p05: number
+    readonly p50: number
+    readonly p95: number
+    readonly p99: number
+  }
   readonly histogram: Histogram
 }
 

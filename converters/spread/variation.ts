@@ -147,9 +147,17 @@ function stageParts(design: DesignDocument): Variable[] {
   const several = outputCapacitors.length > 1
   const isCoupled = topology === 'sepic' || topology === 'cuk'
   return [
-    ...tolerated(design, 'inductance', 'inductor.inductance', 'Inductance', 'H', inductor.inductance, (draft, value) => {
-      draft.design.inductor.inductance = value
-    }),
+    ...tolerated(
+      design,
+      'inductance',
+      'inductor.inductance',
+      'Inductance',
+      'H',
+      inductor.inductance,
+      (draft, value) => {
+        draft.design.inductor.inductance = value
+      },
+    ),
     ...tolerated(
       design,
       'inductance',
@@ -223,7 +231,10 @@ function controlParts(design: DesignDocument): Variable[] {
         ]
   switch (amplifier.kind) {
     case 'op-amp':
-      return [...ofControl, ...ofAmplifier('amplifier', 'gainBandwidth', 'Gain-bandwidth', 'Hz', amplifier.gainBandwidth)]
+      return [
+        ...ofControl,
+        ...ofAmplifier('amplifier', 'gainBandwidth', 'Gain-bandwidth', 'Hz', amplifier.gainBandwidth),
+      ]
     case 'transconductance':
       return [
         ...ofControl,
@@ -232,7 +243,13 @@ function controlParts(design: DesignDocument): Variable[] {
     case 'shunt-optocoupler':
       return [
         ...ofControl,
-        ...ofAmplifier('amplifier', 'currentTransferRatio', 'Current transfer ratio', '', amplifier.currentTransferRatio),
+        ...ofAmplifier(
+          'amplifier',
+          'currentTransferRatio',
+          'Current transfer ratio',
+          '',
+          amplifier.currentTransferRatio,
+        ),
         ...ofAmplifier('resistor', 'pullUpResistance', 'Pull-up resistor', 'Ω', amplifier.pullUpResistance),
         ...ofAmplifier('resistor', 'ledResistance', 'LED resistor', 'Ω', amplifier.ledResistance),
       ]
