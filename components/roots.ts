@@ -5,6 +5,7 @@ import type { Root, RootRole } from '@/converters/results'
 export const ROLE_NAMES: Readonly<Record<RootRole, string>> = {
   'output-filter': 'output filter',
   'capacitor-esr': 'capacitor ESR',
+  'input-filter': 'input filter',
   coupling: 'coupling capacitor',
   'right-half-plane-zero': 'right half plane',
   sampling: 'sampling',

@@ -4,7 +4,7 @@ import { networkGain, networkRoots, networkStateSpace, type Network } from './co
 import { fittedNetwork } from './compensators/fitted'
 import type { DesignDocument, OperatingPointRequest } from './document'
 import { invalid } from './parse'
-import { argumentDeg, complex, decibels, divide, multiply, type Complex } from './numeric/complex'
+import { complex, divide, multiply, type Complex } from './numeric/complex'
 import { eigenvalues } from './numeric/eigen'
 import { innerCurrentLoop } from './switched/innerLoop'
 import { describeOperatingPoint } from './operatingPoint'
@@ -14,8 +14,10 @@ import { readMargins } from './loop/margins'
 import { stepResponse } from './loop/stepResponse'
 import { closedLoopMap } from './simulation/closedOrbit'
 import { describeNetworkRoots } from './loop/networkRoles'
+import { curve, defaultFrequencies } from './responseCurve'
 import { describeRoots } from './roots'
-import type { Analysis, Loop, Margins, ModelPair, ResponseCurve } from './results'
+import { checkInputFilter } from './inputFilter'
+import type { Analysis, Loop, Margins, ModelPair } from './results'
 import { ENGINE_VERSION } from './version'
 import { warningsFor } from './warnings'
 
@@ -27,7 +29,6 @@ export interface AnalysisOptions {
 
 const MOST_FREQUENCIES = 2000
 const DEFAULT_FREQUENCIES = 400
-const LOWEST_FREQUENCY = 10
 
 export function analyseDesign(design: DesignDocument, options: AnalysisOptions = {}): Analysis {
   const point = operatingPointOf(design, options.operatingPoint)
@@ -54,6 +55,7 @@ export function analyseDesign(design: DesignDocument, options: AnalysisOptions =
     plant: { poles: plant.poles, zeros: plant.zeros, closedForms: closedForms(plant) },
     frequencies,
     responses,
+    inputFilter: checkInputFilter(design, point, network),
     innerCurrentLoop:
       design.modulator.kind === 'peak-current-mode'
         ? curve(frequencies.map(inHertz(innerCurrentLoop(plant.circuit, plant.orbit))))
@@ -74,15 +76,8 @@ export function operatingPointOf(design: DesignDocument, request: OperatingPoint
   }
 }
 
-/** Logarithmic, from `LOWEST_FREQUENCY` to half the switching frequency. */
-export function defaultFrequencies(switchingFrequency: number, count = DEFAULT_FREQUENCIES): number[] {
-  const highest = switchingFrequency / 2
-  const lowest = Math.min(LOWEST_FREQUENCY, highest / 1000)
-  return Array.from({ length: count }, (_, i) => lowest * (highest / lowest) ** (i / (count - 1)))
-}
-
 export function checkedFrequencies(design: DesignDocument, asked: readonly number[] | undefined): number[] {
-  if (asked === undefined) return defaultFrequencies(design.switchingFrequency)
+  if (asked === undefined) return defaultFrequencies(design.switchingFrequency, DEFAULT_FREQUENCIES)
   const most = 10 * design.switchingFrequency
   if (asked.length === 0 || asked.length > MOST_FREQUENCIES) {
     throw invalid([
@@ -126,16 +121,6 @@ const mapPair = <T, U>(pair: ModelPair<T>, f: (value: T) => U): ModelPair<U> => 
   averaged: f(pair.averaged),
   switched: f(pair.switched),
 })
-
-/** Gain in dB and phase unwrapped along the list, starting in (−180°, 180°]. */
-export function curve(values: readonly Complex[]): ResponseCurve {
-  let previous = 0
-  return values.map((value, i) => {
-    const principal = argumentDeg(value)
-    previous = i === 0 ? principal : principal + 360 * Math.round((previous - principal) / 360)
-    return { gainDb: decibels(value), phaseDeg: previous }
-  })
-}
 
 function describeLoop(
   plant: OpenPlant,

@@ -3,6 +3,7 @@
  * the rectifier conducting, and (where conduction can stop) neither.
  */
 import { effectiveCapacitance, type DesignDocument } from './document'
+import { DesignError } from './errors'
 import { GROUND, INPUTS, reduceNetwork, type Element, type Measure } from './network'
 import { TOPOLOGY_DEFINITIONS } from './topologies'
 import type { TopologyDefinition } from './topologies/topology'
@@ -59,8 +60,11 @@ export function buildCircuit(design: DesignDocument, lineVoltage: number, output
   const outputStates = mergeBanks(design)
   const { positive, negative } = topology.output
   const load = linearLoad(design, outputCurrent)
+  const filter = filterElements(design.inputFilter)
+  const supply = filter.length > 0 ? 'supply' : 'line'
   const common: Element[] = [
-    { kind: 'branch', name: 'source', from: 'line', to: GROUND, resistance: 0, source: 'line' },
+    { kind: 'branch', name: 'source', from: supply, to: GROUND, resistance: 0, source: 'line' },
+    ...filter,
     ...topology.always(design),
     ...outputStates.map(({ capacitance, esr }, i): Element => {
       return { kind: 'capacitor', name: `output${i}`, from: positive, to: negative, capacitance, esr }
@@ -68,7 +72,13 @@ export function buildCircuit(design: DesignDocument, lineVoltage: number, output
     { kind: 'conductance', from: positive, to: negative, conductance: load.conductance },
     { kind: 'current-source', from: positive, to: negative, source: 'load' },
   ]
-  const states = [...topology.inductors, ...topology.capacitors, ...outputStates.map((_, i) => `output${i}`)]
+  const filterStates = filter.map(({ name }) => name)
+  const states = [
+    ...topology.inductors,
+    ...topology.capacitors,
+    ...outputStates.map((_, i) => `output${i}`),
+    ...filterStates,
+  ]
   const measures: Measure[] = [
     { kind: 'voltage', from: positive, to: negative },
     { kind: 'current', of: 'switch' },
@@ -100,7 +110,11 @@ export function buildCircuit(design: DesignDocument, lineVoltage: number, output
     on: reduce([...common, ...topology.on(design)]),
     off: reduce([...common, ...topology.off(design)]),
     // With no current there is no voltage across the inductor, so it reads as a plain connection and its state stands.
-    idle: reduce(common.map((element) => (element.kind === 'inductor' ? connection(element) : element))),
+    idle: reduce(
+      common.map((element) =>
+        element.kind === 'inductor' && topology.inductors.includes(element.name) ? connection(element) : element,
+      ),
+    ),
     outputStates,
   }
 }
@@ -137,4 +151,35 @@ export function linearLoad(
       // i = P/v ≈ 2P/V − v·P/V²
       return { conductance: -current / output.voltage, current: 2 * current }
   }
+}
+
+type FilterElement = Extract<Element, { kind: 'inductor' | 'capacitor' }>
+
+/** Inductor from the supply to the line node, capacitor there, and the damping branch where it is fitted. */
+function filterElements(filter: DesignDocument['inputFilter']): FilterElement[] {
+  if (!filter) return []
+  const { inductance, resistance, capacitance, esr, dampingCapacitance, dampingResistance } = filter
+  const elements: FilterElement[] = [
+    { kind: 'inductor', name: 'filterInductor', from: 'supply', to: 'line', inductance, resistance },
+    { kind: 'capacitor', name: 'filterCapacitor', from: 'line', to: GROUND, capacitance, esr },
+  ]
+  if (!dampingCapacitance) return elements
+  if (!dampingResistance) {
+    throw DesignError.at(
+      'invalid-document',
+      'inputFilter.dampingResistance',
+      'A damping capacitor without its resistor damps nothing; give the resistor a value above zero.',
+    )
+  }
+  const damping = { from: 'line', to: GROUND, capacitance: dampingCapacitance, esr: dampingResistance }
+  return [...elements, { kind: 'capacitor', name: 'filterDamping', ...damping }]
+}
+
+/** States to start a search from: output voltages and line as they should be, currents as the power asks. */
+export function roughState({ states, design, lineVoltage, outputCurrent }: Circuit): Float64Array {
+  return Float64Array.from(states, (state) => {
+    if (state.startsWith('output')) return design.output.voltage
+    if (state === 'filterInductor') return (design.output.voltage * outputCurrent) / lineVoltage
+    return state.startsWith('filter') ? lineVoltage : 0
+  })
 }

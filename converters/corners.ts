@@ -1,11 +1,12 @@
 /** The loop at every corner of line and load, read from the switched model. */
-import { checkedFrequencies, curve, defaultFrequencies, marginsOf } from './analysis'
+import { checkedFrequencies, marginsOf } from './analysis'
 import { fittedNetwork } from './compensators/fitted'
 import { networkGain } from './compensators/networks'
 import type { DesignDocument } from './document'
 import { DesignError } from './errors'
 import { multiply } from './numeric/complex'
 import { openPlant, rightHalfPlaneZero, type PlantPoint } from './plant'
+import { curve, defaultFrequencies } from './responseCurve'
 import type { CornerSet } from './results'
 
 export interface CornerOptions {

@@ -97,28 +97,45 @@ function poleRoles(
   isContinuous: boolean,
   isCurrentMode: boolean,
 ): (pole: Complex) => RootRole {
+  const filterRole = filterPoles(circuit, poles)
   const half = Math.PI / circuit.period
   const size = (pole: Complex) => Math.hypot(pole.re, pole.im)
-  const sorted = [...poles].sort((a, b) => size(a) - size(b))
+  const sorted = poles.filter((pole) => !filterRole.includes(pole)).sort((a, b) => size(a) - size(b))
   if (isContinuous && !isCurrentMode) {
     const pairs = sorted.filter((pole) => pole.im !== 0)
     const filter = pairs.length > 0 ? pairs.slice(0, 2) : sorted.slice(0, 2)
-    return (pole) => (filter.includes(pole) ? 'output-filter' : pairs.includes(pole) ? 'coupling' : 'capacitor-esr')
+    return (pole) =>
+      filterRole.includes(pole)
+        ? 'input-filter'
+        : filter.includes(pole)
+          ? 'output-filter'
+          : pairs.includes(pole)
+            ? 'coupling'
+            : 'capacitor-esr'
   }
   const fast = isContinuous
     ? // The pair at half the switching frequency, or the two real poles into which a steep ramp splits it.
       [...sorted].sort((a, b) => distanceToPair(a, half) - distanceToPair(b, half)).slice(0, 2)
     : sorted.slice(-1)
   return (pole) => {
+    if (filterRole.includes(pole)) return 'input-filter'
     if (fast.includes(pole)) return isContinuous ? 'sampling' : 'inductor'
     if (pole.im !== 0) return 'coupling'
     return pole === sorted[0] ? 'load-capacitor' : 'capacitor-esr'
   }
 }
 
-/** How far a pole is from half the switching frequency, in octaves; complex poles come first. */
-const distanceToPair = (pole: Complex, half: number): number =>
-  Math.abs(Math.log2(Math.hypot(pole.re, pole.im) / half)) - (pole.im !== 0 ? 100 : 0)
+/** Poles that the input filter adds: those nearest to its own resonance. */
+function filterPoles({ design: { inputFilter }, states }: Circuit, poles: readonly Complex[]): Complex[] {
+  if (!inputFilter) return []
+  const natural = 1 / Math.sqrt(inputFilter.inductance * inputFilter.capacitance)
+  const count = states.filter((state) => state.startsWith('filter')).length
+  return [...poles].sort((a, b) => distanceToPair(a, natural) - distanceToPair(b, natural)).slice(0, count)
+}
+
+/** How far a pole is from a frequency (rad/s), in octaves; complex poles come first. */
+const distanceToPair = (pole: Complex, omega: number): number =>
+  Math.abs(Math.log2(Math.hypot(pole.re, pole.im) / omega)) - (pole.im !== 0 ? 100 : 0)
 
 /** Lowest zero in the right half plane, Hz; null if there is none. */
 export function rightHalfPlaneZero(zeros: readonly Root[]): number | null {

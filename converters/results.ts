@@ -29,6 +29,7 @@ export interface Root {
 export type RootRole =
   | 'output-filter' // the L-C pair, or the two real poles it has become
   | 'capacitor-esr'
+  | 'input-filter'
   | 'coupling' // of the coupling capacitor with its inductors
   | 'right-half-plane-zero'
   | 'sampling' // the pair near half the switching frequency in current mode
@@ -210,12 +211,32 @@ export type WarningCode =
   | 'conditionally-stable'
   | 'several-crossovers'
   | 'ripple-large'
+  | 'input-filter' // its impedance comes too near the converter's
   | 'hazardous-voltage'
 
 export interface Warning {
   readonly code: WarningCode
   readonly message: string
   readonly field: string | null
+}
+
+/** An input filter against the converter that it feeds (Middlebrook 1976). */
+export interface InputFilterCheck {
+  readonly frequencies: readonly number[] // Hz
+  readonly filterImpedance: ResponseCurve // Ω, seen from the converter
+  readonly nullImpedance: ResponseCurve // Ω, converter input with the output held still by the control
+  readonly openLoopImpedance: ResponseCurve // Ω, control held still
+  readonly closedLoopImpedance: ResponseCurve | null // Ω, null without a compensator
+  /** Least ratio of the converter's null and open-loop impedance to the filter's, dB, and where it is. */
+  readonly margin: number
+  readonly marginFrequency: number // Hz
+  /** A parallel damping branch that keeps the filter a factor of two below the converter; null if it already is. */
+  readonly suggestion: {
+    readonly dampingCapacitance: number // F
+    readonly dampingResistance: number // Ω
+    readonly peakImpedance: number // Ω with it
+    readonly source: string
+  } | null
 }
 
 export interface Analysis {
@@ -229,6 +250,8 @@ export interface Analysis {
     readonly lineToOutput: ModelPair<ResponseCurve>
     readonly outputImpedance: ModelPair<ResponseCurve>
   }
+  /** Null without an input filter. */
+  readonly inputFilter: InputFilterCheck | null
   /** Current mode only: the loop that the current comparator closes. */
   readonly innerCurrentLoop: ResponseCurve | null
   /** Null while the document has no compensator. */

@@ -16,6 +16,7 @@ export function warningsFor(design: DesignDocument, analysis: Computed, rightHal
     ...switchingWarnings(analysis),
     ...marginWarnings(design, analysis, rightHalfPlaneZero),
     ...modelWarnings(analysis),
+    ...filterWarnings(analysis),
     ...stageWarnings(design, analysis),
   ]
 }
@@ -124,6 +125,22 @@ function firstParting(frequencies: readonly number[], a: ResponseCurve, b: Respo
     return Math.abs(point.gainDb - other.gainDb) > APART.gainDb || apart > APART.phaseDeg
   })
   return index < 0 ? null : frequencies[index]!
+}
+
+function filterWarnings({ inputFilter }: Computed): Warning[] {
+  if (!inputFilter?.suggestion) return []
+  const { margin, marginFrequency, suggestion } = inputFilter
+  const near =
+    margin < 0
+      ? `exceeds the input impedance of the converter by ${(-margin).toFixed(1)} dB`
+      : `comes within ${margin.toFixed(1)} dB of the input impedance of the converter`
+  return [
+    {
+      code: 'input-filter',
+      message: `The output impedance of the input filter ${near} at ${round(marginFrequency)} Hz. A damping branch of about ${round(suggestion.dampingCapacitance * 1e6)} µF with ${round(suggestion.dampingResistance)} Ω keeps them apart.`,
+      field: 'inputFilter',
+    },
+  ]
 }
 
 function stageWarnings(design: DesignDocument, { operatingPoint }: Computed): Warning[] {

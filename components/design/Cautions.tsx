@@ -37,6 +37,7 @@ const TITLES: Readonly<Record<Warning['code'], string>> = {
   'conditionally-stable': 'Stable only while the gain stays up',
   'several-crossovers': 'Several crossovers',
   'ripple-large': 'Large ripple',
+  'input-filter': 'Input filter too near the converter',
   'hazardous-voltage': 'Hazardous voltage',
 }
 

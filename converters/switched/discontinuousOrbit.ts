@@ -4,7 +4,7 @@
  * current and that the mean output is the wanted one. Newton with exact derivatives, from the triangle that ideal parts
  * would give.
  */
-import { MEASURES, type Circuit, type Interval } from '../circuit'
+import { MEASURES, roughState, type Circuit, type Interval } from '../circuit'
 import { solveReal } from '../numeric/linearSystem'
 import { advance, derivative, dot, flowOf, outputIntegral, read, type Flow } from './flow'
 import type { Orbit } from './orbit'
@@ -57,8 +57,8 @@ export function findDiscontinuousOrbit(circuit: Circuit): Orbit | null {
 
 /** Triangular inductor current between constant voltages; null where the current does not rise and fall. */
 function triangle(circuit: Circuit): { start: Float64Array; on: number; off: number } | null {
-  const { on, off, stoppingState, inputs, design, period } = circuit
-  const start = Float64Array.from(circuit.states, (_, i) => (i === stoppingState ? 0 : design.output.voltage))
+  const { on, off, stoppingState, inputs, period } = circuit
+  const start = roughState(circuit)
   const rise = derivative(on, start, inputs)[stoppingState]!
   const fall = -derivative(off, start, inputs)[stoppingState]!
   if (!(rise > 0 && fall > 0)) return null

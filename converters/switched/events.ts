@@ -8,7 +8,7 @@
  */
 import { MEASURES, type Circuit, type Interval } from '../circuit'
 import { DesignError } from '../errors'
-import { derivative, dot, read } from './flow'
+import { derivative, dot } from './flow'
 import type { Orbit } from './orbit'
 
 export interface SwitchingEvent {
@@ -21,8 +21,6 @@ export interface SwitchingEvent {
   readonly rate: number
   /** f_before − f_after, the state's displacement per second of delay. */
   readonly displacement: Float64Array
-  /** v_out before − v_out after, V. */
-  readonly outputStep: number
 }
 
 /**
@@ -44,9 +42,6 @@ export function eventsOf(circuit: Circuit, orbit: Orbit): SwitchingEvent[] {
       control: k === 0 ? 1 : 0,
       rate,
       displacement: fBefore.map((value, i) => value - fAfter[i]!),
-      outputStep:
-        read(before.interval, MEASURES.outputVoltage, before.end, inputs) -
-        read(after.interval, MEASURES.outputVoltage, after.start, inputs),
     }
   })
 }

@@ -15,6 +15,7 @@ import type { Complex } from '../numeric/complex'
 import { invertComplex } from '../numeric/complexInverse'
 import { flatten } from '../numeric/linearSystem'
 import { eventsOf } from './events'
+import { read } from './flow'
 import type { Orbit } from './orbit'
 
 export interface SwitchedResponses {
@@ -23,30 +24,50 @@ export interface SwitchedResponses {
   readonly outputImpedance: Complex // Ω, of a current drawn
 }
 
+/** Answers of one measure to control (per V), line (per V) and load current drawn (per A). */
+export interface MeasureResponses {
+  readonly toControl: Complex
+  readonly toLine: Complex
+  readonly toLoad: Complex
+}
+
 /** Injections, in the order in which they are carried through the loop below. */
 const CONTROL = 0
 const LINE = 1
 const LOAD = 2
 const CHANNELS = 3
 
-/** Prepares the orbit and returns the responses as functions of ω in rad/s; ω > 0. */
+/** Responses of the output voltage as functions of ω in rad/s; ω > 0. */
 export function switchedResponses(circuit: Circuit, orbit: Orbit): (omega: number) => SwitchedResponses {
+  const respond = measureResponses(circuit, orbit, MEASURES.outputVoltage)
+  return (omega) => {
+    const { toControl, toLine, toLoad } = respond(omega)
+    return {
+      controlToOutput: toControl,
+      lineToOutput: toLine,
+      outputImpedance: { re: -toLoad.re, im: -toLoad.im },
+    }
+  }
+}
+
+/** Prepares the orbit and returns the responses of one of `MEASURES` as functions of ω in rad/s; ω > 0. */
+export function measureResponses(circuit: Circuit, orbit: Orbit, measure: number): (omega: number) => MeasureResponses {
   const n = circuit.states.length
   const events = eventsOf(circuit, orbit)
   const segments = orbit.segments.map(({ interval, duration, transition }) => ({
     A: flatten(interval.A),
     /** Columns of the line and the load, n × 2. */
     B: flatten(interval.B.map((row) => [row[INPUTS.indexOf('line')]!, row[INPUTS.indexOf('load')]!])),
-    output: Float64Array.from(interval.C[MEASURES.outputVoltage]!),
-    through: [
-      0,
-      interval.D[MEASURES.outputVoltage]![INPUTS.indexOf('line')]!,
-      interval.D[MEASURES.outputVoltage]![INPUTS.indexOf('load')]!,
-    ],
+    output: Float64Array.from(interval.C[measure]!),
+    through: [0, interval.D[measure]![INPUTS.indexOf('line')]!, interval.D[measure]![INPUTS.indexOf('load')]!],
     E: transition,
     duration,
   }))
-  const stops = events.map((event) => ({
+  const valueAt = (k: number, side: 'start' | 'end') => {
+    const segment = orbit.segments[k]!
+    return read(segment.interval, measure, segment[side], circuit.inputs)
+  }
+  const stops = events.map((event, k) => ({
     gradient: event.stateGradient,
     /** Minus what each injection adds to the surface. */
     drive: [
@@ -56,7 +77,8 @@ export function switchedResponses(circuit: Circuit, orbit: Orbit): (omega: numbe
     ],
     rate: event.rate,
     displacement: event.displacement,
-    outputStep: event.outputStep,
+    /** The measure before minus after the switching instant. */
+    step: valueAt(k, 'end') - valueAt(k + 1, 'start'),
   }))
 
   const count = segments.length
@@ -149,8 +171,8 @@ export function switchedResponses(circuit: Circuit, orbit: Orbit): (omega: numbe
       if (k < count - 1) {
         cross(k, isDriven ? stops[k]!.drive[channel]! : 0)
         if (isRead) {
-          sumRe[channel]! += stops[k]!.outputStep * delayRe
-          sumIm[channel]! += stops[k]!.outputStep * delayIm
+          sumRe[channel]! += stops[k]!.step * delayRe
+          sumIm[channel]! += stops[k]!.step * delayIm
         }
       }
       zRe.set(nextRe)
@@ -179,7 +201,7 @@ export function switchedResponses(circuit: Circuit, orbit: Orbit): (omega: numbe
   const cos = new Float64Array(count)
   const sin = new Float64Array(count)
 
-  return function respond(omega: number): SwitchedResponses {
+  return function respond(omega: number): MeasureResponses {
     // An undamped circuit hit exactly at its own resonance: step aside by less than any reading can tell.
     if (!invertAll(omega)) return respond(omega * (1 + 1e-9))
     for (let k = 0; k < count; k++) {
@@ -228,9 +250,9 @@ export function switchedResponses(circuit: Circuit, orbit: Orbit): (omega: numbe
     }
     const T = circuit.period
     return {
-      controlToOutput: { re: sumRe[CONTROL]! / T, im: sumIm[CONTROL]! / T },
-      lineToOutput: { re: sumRe[LINE]! / T, im: sumIm[LINE]! / T },
-      outputImpedance: { re: -sumRe[LOAD]! / T, im: -sumIm[LOAD]! / T },
+      toControl: { re: sumRe[CONTROL]! / T, im: sumIm[CONTROL]! / T },
+      toLine: { re: sumRe[LINE]! / T, im: sumIm[LINE]! / T },
+      toLoad: { re: sumRe[LOAD]! / T, im: sumIm[LOAD]! / T },
     }
   }
 }

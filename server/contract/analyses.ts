@@ -125,10 +125,31 @@ const Warning = z.object({
     'conditionally-stable',
     'several-crossovers',
     'ripple-large',
+    'input-filter',
     'hazardous-voltage',
   ]),
   message: z.string(),
   field: z.string().nullable(),
+})
+
+/** An input filter against the converter that it feeds. */
+const InputFilterCheck = z.object({
+  frequencies: z.array(z.number()).readonly().describe('Hz'),
+  filterImpedance: ResponseCurve.describe('Ω, seen from the converter'),
+  nullImpedance: ResponseCurve.describe('Ω, converter input with the output held still by the control'),
+  openLoopImpedance: ResponseCurve.describe('Ω, control held still'),
+  closedLoopImpedance: ResponseCurve.nullable().describe('Ω'),
+  margin: z.number().describe("dB, least ratio of the converter's impedances to the filter's"),
+  marginFrequency: z.number().describe('Hz'),
+  suggestion: z
+    .object({
+      dampingCapacitance: z.number().describe('F'),
+      dampingResistance: z.number().describe('Ω'),
+      peakImpedance: z.number().describe('Ω'),
+      source: z.string(),
+    })
+    .nullable()
+    .describe('A damping branch that keeps them apart; null if they are.'),
 })
 
 /** One design at one operating point: its plant, its loop and its margins. */
@@ -139,6 +160,7 @@ export const Analysis = z.object({
   plant: z.object({ poles: Roots, zeros: Roots, closedForms: z.array(ClosedForm).readonly() }),
   frequencies: z.array(z.number()).readonly().describe('Hz'),
   responses: z.object({ controlToOutput: CurvePair, lineToOutput: CurvePair, outputImpedance: CurvePair }),
+  inputFilter: InputFilterCheck.nullable(),
   innerCurrentLoop: ResponseCurve.nullable().describe('Current mode only.'),
   loop: Loop.nullable().describe('Null while the design has no compensator.'),
   margins: Margins.nullable().describe('From the switched model.'),

@@ -24,6 +24,7 @@ export const Root = z.object({
   role: z.enum([
     'output-filter',
     'capacitor-esr',
+    'input-filter',
     'coupling',
     'right-half-plane-zero',
     'sampling',
