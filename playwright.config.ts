@@ -10,7 +10,9 @@ export default defineConfig({
   workers: 2,
   fullyParallel: true,
   retries: 0,
-  timeout: 30_000,
+  // A test with several scans for accessibility takes seconds on a quiet machine and a minute on a busy one.
+  timeout: 120_000,
+  expect: { timeout: 15_000 },
   reporter: report ? [['list'], ['json', { outputFile: report }]] : [['list']],
   use: {
     baseURL: `http://127.0.0.1:${port}`,

@@ -98,9 +98,11 @@ describe.each(COMPUTE_PATHS)('POST %s', (path) => {
     expect(problem.detail).toBeTruthy()
   })
 
-  it('says of a topology that is still to come that it cannot be computed yet', async () => {
-    const problem = await readProblem(await server.post(path, { design: buckDesign({ topology: 'cuk' }) }), 422)
-    expect(fieldsOf(problem)).toEqual(['design.topology'])
+  it('names the part that a topology cannot do without', async () => {
+    const design = buckDesign({ topology: 'cuk', couplingCapacitor: null })
+    const problem = await readProblem(await server.post(path, { design }), 422)
+    expect(problem.type).toBe('/problems/design-refused')
+    expect(fieldsOf(problem)).toEqual(['design.couplingCapacitor.capacitance'])
   })
 
   it.each(['null', '17', '"design"', '[]', '{}'])('refuses a request that is only %s', async (text) => {
