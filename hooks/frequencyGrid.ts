@@ -9,10 +9,13 @@ export function lowestFrequency(switchingFrequency: number): number {
   return Math.min(LOWEST, switchingFrequency / 10 ** FEWEST_DECADES)
 }
 
-/** Logarithmic grid from the lowest frequency to the switching frequency, both included, in Hz. */
+/**
+ * Logarithmic grid from the lowest frequency to half the switching frequency, both included, in Hz. Above it a sampled
+ * loop has nothing new to say.
+ */
 export function frequencyGrid(switchingFrequency: number): number[] {
   const lowest = lowestFrequency(switchingFrequency)
-  const decades = Math.log10(switchingFrequency / lowest)
+  const decades = Math.log10(switchingFrequency / 2 / lowest)
   const intervals = Math.round(decades * POINTS_PER_DECADE)
   return Array.from({ length: intervals + 1 }, (_, index) =>
     Number((lowest * 10 ** ((decades * index) / intervals)).toPrecision(6)),

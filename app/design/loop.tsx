@@ -58,7 +58,6 @@ function Faults() {
 
 /** No network yet: the room for the crossover, what there is to work with, and the networks to choose from. */
 function OpenLoop() {
-  const { design } = useDraft()
   const { analysis } = useDesignAnalysis()
   return (
     <Columns
@@ -84,7 +83,7 @@ function OpenLoop() {
         <>
           {analysis ? (
             <Card>
-              <Responses analysis={analysis} switchingFrequency={design.switchingFrequency} />
+              <Responses analysis={analysis} />
             </Card>
           ) : null}
           <Caution />
@@ -119,13 +118,7 @@ function ClosedLoop() {
               <LoopFigures margins={margins} corners={corners.data} targets={design.targets} />
               <PointChips />
               <Card>
-                <LoopPlot
-                  loop={loop}
-                  margins={margins}
-                  corners={corners.data}
-                  frequencies={analysis.frequencies}
-                  switchingFrequency={design.switchingFrequency}
-                />
+                <LoopPlot loop={loop} margins={margins} corners={corners.data} frequencies={analysis.frequencies} />
                 <Text variant="small" tone="quiet">
                   The pale band is the spread over the corners of line and load.
                 </Text>

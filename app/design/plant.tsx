@@ -17,11 +17,9 @@ import { Card } from '@/components/ui/Card'
 import { Loading } from '@/components/ui/states'
 import { Text } from '@/components/ui/Text'
 import type { Plant } from '@/converters/results'
-import { useDraft } from '@/hooks/draft/useDraft'
 import { useDesignAnalysis } from '@/hooks/useDesignAnalysis'
 
 export default function PlantScreen() {
-  const { design } = useDraft()
   const { analysis, error, isStale, retry } = useDesignAnalysis()
   const waiting = error ? null : <Loading label="Computing the plant" bars={[180, 320]} />
   return (
@@ -58,7 +56,7 @@ export default function PlantScreen() {
           analysis ? (
             <>
               <Card>
-                <Responses analysis={analysis} switchingFrequency={design.switchingFrequency} />
+                <Responses analysis={analysis} />
               </Card>
               <Card title="Closed forms">
                 <ClosedForms forms={analysis.plant.closedForms} />

@@ -2,7 +2,6 @@ import { useState } from 'react'
 import { StyleSheet, View } from 'react-native'
 import { designName, railSummary, stageSummary } from './summary'
 import { DesignMenu } from './DesignMenu'
-import { UpdatingMark } from './UpdatingMark'
 import { Button, LinkButton } from '@/components/ui/Button'
 import { Text } from '@/components/ui/Text'
 import { Wordmark } from '@/components/ui/Wordmark'
@@ -10,12 +9,14 @@ import { space } from '@/constants/theme'
 import { draftStore } from '@/hooks/draft/store'
 import { useCanUndo, useDraft } from '@/hooks/draft/useDraft'
 import { useCopyLink } from '@/hooks/useCopyLink'
+import { useIsUpdating } from '@/hooks/useIsUpdating'
 import { useLayout } from '@/hooks/useLayout'
 
 /** Name and gist of the open design, and what can be done with it as a whole. */
 export function DesignHeader() {
   const { design } = useDraft()
   const { isWide } = useLayout()
+  const isSlow = useIsUpdating()
   const canUndo = useCanUndo()
   const [isMenuOpen, setMenuOpen] = useState(false)
   const { copy, outcome } = useCopyLink()
@@ -27,10 +28,11 @@ export function DesignHeader() {
           {designName(design)}
         </Text>
         <Text variant="small" tone="quiet" lines={1}>
-          {isWide ? `${railSummary(design)} · ${stageSummary(design)}` : railSummary(design)}
+          {[railSummary(design), ...(isWide ? [stageSummary(design)] : []), ...(isSlow ? ['updating'] : [])].join(
+            ' · ',
+          )}
         </Text>
       </View>
-      <UpdatingMark />
       {canUndo ? <Button kind="quiet" icon="undo" iconOnly={!isWide} label="Undo" onPress={draftStore.undo} /> : null}
       {isWide ? (
         <>

@@ -10,11 +10,10 @@ export interface LoopPlotProps {
   readonly margins: Margins
   readonly corners: CornerSet | undefined
   readonly frequencies: readonly number[]
-  readonly switchingFrequency: number
 }
 
 /** The loop gain: switched solid, averaged dashed, the spread of the corners behind them. */
-export function LoopPlot({ loop, margins, corners, frequencies, switchingFrequency }: LoopPlotProps) {
+export function LoopPlot({ loop, margins, corners, frequencies }: LoopPlotProps) {
   const band = useMemo(() => {
     const matches = corners?.frequencies.length === frequencies.length
     return matches ? bandOf(corners.corners.map((corner) => corner.loop)) : null
@@ -37,7 +36,6 @@ export function LoopPlot({ loop, margins, corners, frequencies, switchingFrequen
       band={band}
       gainTitle="Gain, dB"
       crossover={crossover === null || phaseMargin === null ? null : { frequency: crossover, phaseMargin }}
-      switchingFrequency={switchingFrequency}
       height={460}
     />
   )

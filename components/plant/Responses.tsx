@@ -30,18 +30,12 @@ const RESPONSES: Readonly<Record<ResponseName, { title: string; gain: string; is
   }
 
 /** One response of the plant at a time: switched solid, averaged dashed, and with the loop closed where there is one. */
-export function Responses({
-  analysis,
-  switchingFrequency,
-}: {
-  readonly analysis: Analysis
-  readonly switchingFrequency: number
-}) {
+export function Responses({ analysis }: { readonly analysis: Analysis }) {
   const [name, setName] = useState<ResponseName>('controlToOutput')
   const { title, gain, isImpedance, note } = RESPONSES[name]
   const closed = name === 'controlToOutput' ? undefined : analysis.loop?.closedLoop[name].switched
   const curves = curvesOf(analysis.responses[name], closed)
-  const at = Math.sqrt((analysis.frequencies[0] ?? 10) * switchingFrequency)
+  const at = Math.sqrt((analysis.frequencies[0] ?? 10) * (analysis.frequencies.at(-1) ?? 1e6))
   const reading = curves[0] && interpolate(curves[0], analysis.frequencies, at)
   return (
     <>
@@ -72,7 +66,6 @@ export function Responses({
         curves={curves}
         gainTitle={gain}
         gainScale={isImpedance ? 'Ω' : 'dB'}
-        switchingFrequency={switchingFrequency}
       />
     </>
   )

@@ -28,20 +28,10 @@ interface BodeDrawingProps extends BodePlotProps {
 }
 
 export function BodeDrawing(props: BodeDrawingProps) {
-  const {
-    frequencies,
-    curves,
-    band = null,
-    gainScale = 'dB',
-    crossover = null,
-    switchingFrequency,
-    width,
-    height,
-  } = props
+  const { frequencies, curves, band = null, gainScale = 'dB', crossover = null, width, height } = props
   const theme = useTheme()
   const x = xScaleOf(frequencies, width)
   const panels = panelsOf(props, height)
-  const halfSwitching = x(switchingFrequency / 2)
   return (
     <Svg width={width} height={height} aria-hidden>
       {panels.map((panel) => (
@@ -60,14 +50,6 @@ export function BodeDrawing(props: BodeDrawingProps) {
           </Defs>
           <G clipPath={`url(#${props.fileName}-${panel.quantity})`}>
             {band ? <Path d={bandPath(frequencies, band, panel, x)} fill={bandColor(panel, theme)} /> : null}
-            <Line
-              x1={halfSwitching}
-              x2={halfSwitching}
-              y1={panel.top}
-              y2={panel.bottom}
-              stroke={theme.quiet}
-              strokeDasharray="2 3"
-            />
             {curves.map((curve) => (
               <Path
                 key={curve.key}

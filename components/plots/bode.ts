@@ -41,7 +41,6 @@ export interface BodePlotProps {
   readonly gainTitle: string
   readonly gainScale?: GainScale
   readonly crossover?: CrossoverMark | null
-  readonly switchingFrequency: number // Hz
   readonly height?: number
 }
 
@@ -65,19 +64,11 @@ const OHM_STEPS = [20, 40]
 const PHASE_STEPS = [15, 30, 45, 90, 180]
 const DEEPEST = 140 // dB under the top of the axis; a notch further down says nothing more
 
-/** Above half the switching frequency the sampled curves fold back: drawn as far as they fit, not measured by. */
-const FOLD = 1.05
-
-export function panelsOf(
-  { curves, band = null, gainScale = 'dB', frequencies, switchingFrequency, crossover }: BodePlotProps,
-  height: number,
-): Panel[] {
+export function panelsOf({ curves, band = null, gainScale = 'dB', crossover }: BodePlotProps, height: number): Panel[] {
   const inner = height - TOP - BOTTOM - BETWEEN
   const split = TOP + inner * 0.56
   const all = [...curves.map((curve) => curve.response), ...(band ? [band.low, band.high] : [])]
-  const isRead = (index: number) => (frequencies[index] ?? 0) <= (FOLD * switchingFrequency) / 2
-  const values = (quantity: Quantity) =>
-    all.flatMap((response) => response.filter((_, index) => isRead(index)).map((point) => point[quantity]))
+  const values = (quantity: Quantity) => all.flatMap((response) => response.map((point) => point[quantity]))
   const gains = values('gainDb')
   const top = Math.max(...gains.filter(Number.isFinite), 0)
   const gain = wholeAxis(

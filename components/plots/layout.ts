@@ -64,7 +64,6 @@ export interface LabelRequest {
   readonly height: number
 }
 
-const DISTANCES = [9, 20, 34, 52, 74] as const
 const DIRECTIONS = [
   [1, 0],
   [-1, 0],
@@ -75,6 +74,18 @@ const DIRECTIONS = [
   [0, -1],
   [0, 1],
 ] as const
+type Direction = (typeof DIRECTIONS)[number]
+
+/** Distances of a label that stands off in a slanting direction, down or up and to the side. */
+const SLOPE = 0.7
+/** Every direction at every distance, the places nearest to the point first. */
+const PLACES = [9, 20, 34, 52, 74, 100]
+  .flatMap((distance) => DIRECTIONS.map((direction) => ({ distance, direction })))
+  .sort((a, b) => standOff(a) - standOff(b))
+
+function standOff({ distance, direction: [dx, dy] }: { distance: number; direction: Direction }): number {
+  return dx === 0 || dy === 0 ? distance : distance * Math.hypot(1, SLOPE)
+}
 
 /**
  * Finds a place beside each point where its label lies inside `frame` and covers neither an obstacle nor an earlier
@@ -87,20 +98,17 @@ export function placeLabels(
 ): readonly (Box | null)[] {
   const taken: Box[] = [...obstacles]
   return requests.map((request) => {
-    for (const distance of DISTANCES) {
-      for (const direction of DIRECTIONS) {
-        const box = beside(request, direction, distance)
-        if (!holds(frame, box) || taken.some((other) => overlaps(other, box))) continue
-        taken.push(box)
-        return box
-      }
-    }
-    return null
+    const box = PLACES.map((place) => beside(request, place.direction, place.distance)).find(
+      (candidate) => holds(frame, candidate) && !taken.some((other) => overlaps(other, candidate)),
+    )
+    if (!box) return null
+    taken.push(box)
+    return box
   })
 }
 
-function beside({ x, y, width, height }: LabelRequest, [dx, dy]: readonly [number, number], distance: number): Box {
-  const slope = dx === 0 ? 1 : 0.7
+function beside({ x, y, width, height }: LabelRequest, [dx, dy]: Direction, distance: number): Box {
+  const slope = dx === 0 ? 1 : SLOPE
   const left = dx === 0 ? x - width / 2 : dx > 0 ? x + distance : x - distance - width
   const top = dy === 0 ? y - height / 2 : dy > 0 ? y + distance * slope : y - distance * slope - height
   return { x: left, y: top, width, height }
