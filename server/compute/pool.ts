@@ -19,7 +19,7 @@ export interface ComputePool {
   /**
    * Computes the answer, as JSON.
    * @param gone - Aborted when nobody wants the answer any more.
-   * @throws AppError 'design-refused', 'busy' or 'computation-stopped'
+   * @throws AppError 'design-refused', 'busy', 'computation-stopped' or, while closing, 'not-ready'
    */
   readonly run: (request: TaskRequest, gone?: AbortSignal) => Promise<Uint8Array>
   /** Starts the threads and loads the engine in each. */
@@ -61,6 +61,7 @@ export function createComputePool({ threads, queue, timeoutMs }: ComputePoolOpti
     try {
       return jsonOf(await piscina.run({ request, started }, { signal: stop.signal }))
     } catch (error) {
+      if (isClosed) throw new AppError('not-ready', { detail: 'The server is being stopped.' })
       if (!stop.signal.aborted) throw error
       throw new AppError('computation-stopped', {
         detail: `No answer within ${timeoutMs / 1000} s. Ask for fewer frequencies, or try again in a moment.`,

@@ -36,6 +36,10 @@ const Proposal = z.object({
   poles: Roots,
   zeros: Roots,
   margins: z.object({ ideal: CornerMargins, preferred: CornerMargins }),
+  loadStepDip: z
+    .number()
+    .nullable()
+    .describe('V, largest deviation after half of the load range comes at nominal line'),
   reasons: z.array(z.string()).readonly(),
   shortfalls: z.array(z.string()).readonly().describe('What still falls short of the targets; empty when all hold.'),
 })

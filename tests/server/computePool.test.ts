@@ -64,6 +64,14 @@ describe('the compute pool', () => {
     })
   })
 
+  it('tells those who still wait that the server is being stopped', async () => {
+    pool = createComputePool({ threads: 1, queue: 2, timeoutMs: 20_000 })
+    const codes = Promise.all([codeOf(pool.run(analysis(10))), codeOf(pool.run(analysis(10)))])
+    await pool.close()
+    expect(await codes).toEqual(['not-ready', 'not-ready'])
+    expect(pool.isAlive()).toBe(false)
+  })
+
   it('has the engine loaded once it is warm', async () => {
     pool = createComputePool({ threads: 2, queue: 2, timeoutMs: 20_000 })
     await pool.warmUp()
