@@ -17,6 +17,7 @@ import { useTheme } from '@/hooks/useTheme'
 
 const METHODS: Readonly<Record<Proposal['method'], string>> = {
   'k-factor': 'by the K factor',
+  optimised: 'optimised over the corners',
   placed: 'zeros and poles placed',
 }
 

@@ -4,9 +4,9 @@ import {
   BOTTOM,
   curvePath,
   interpolate,
-  labelPlace,
   LEFT,
   panelsOf,
+  placeNames,
   RIGHT,
   xScaleOf,
   yScaleOf,
@@ -162,28 +162,21 @@ function PanelTitle({ panel, title }: { readonly panel: Panel; readonly title: s
 }
 
 function CurveNames({ curves, frequencies, panel, x, theme, crossover }: BodeDrawingProps & PanelProps) {
-  const taken: Box[] = []
-  if (crossover) {
-    taken.push({ x: x(crossover.frequency) - 6, y: panel.top, width: 100, height: panel.bottom - panel.top })
-  }
-  return curves.map((curve) => {
-    const others = curves.filter((other) => other !== curve)
-    const box = labelPlace(curve.label, curve, others, frequencies, panel, x, taken)
-    if (!box) return null
-    taken.push(box)
-    return (
-      <PlotText
-        key={curve.key}
-        x={box.x + 2}
-        y={box.y + 13}
-        color={curve.isQuiet ? theme.quiet : curveColor(panel, theme)}
-        isStrong
-        halo={theme.sheet}
-      >
-        {curve.label}
-      </PlotText>
-    )
-  })
+  const taken: Box[] = crossover
+    ? [{ x: x(crossover.frequency) - 6, y: panel.top, width: 100, height: panel.bottom - panel.top }]
+    : []
+  return placeNames(curves, frequencies, panel, x, taken).map(({ curve, box }) => (
+    <PlotText
+      key={curve.key}
+      x={box.x + 2}
+      y={box.y + 13}
+      color={curve.isQuiet ? theme.quiet : curveColor(panel, theme)}
+      isStrong
+      halo={theme.sheet}
+    >
+      {curve.label}
+    </PlotText>
+  ))
 }
 
 interface CrossoverMarksProps extends BodeDrawingProps {

@@ -140,44 +140,66 @@ export function nearestIndex(frequencies: readonly number[], frequency: number):
   return best
 }
 
-/** Where along the curve its name fits without crossing any curve of the panel; null when it fits nowhere. */
-export function labelPlace(
-  label: string,
-  curve: BodeCurve,
-  others: readonly BodeCurve[],
+/** A curve as it is drawn in a panel: px across and down, one of each for every point. */
+interface Trace {
+  readonly xs: readonly number[]
+  readonly ys: readonly number[]
+}
+
+const NAME_HEIGHT = 17
+const NAME_GAPS = [5, 14, 26, 42]
+const NAME_STARTS = [0.04, 0.12, 0.22, 0.34, 0.46, 0.58, 0.7, 0.82] // shares of the panel's width
+
+/** Names beside their curves where they cross no curve of the panel and none of `taken`; a name without room is left out. */
+export function placeNames(
+  curves: readonly BodeCurve[],
   frequencies: readonly number[],
   panel: Panel,
   x: XScale,
   taken: readonly Box[],
-): Box | null {
+): { curve: BodeCurve; box: Box }[] {
   const y = yScaleOf(panel)
-  const size = { width: textWidth(label, 13.4, 'condensed') + 4, height: 17 }
-  const heights = (of: BodeCurve, from: number, to: number) =>
-    frequencies.flatMap((frequency, index) => {
-      const at = x(frequency)
-      const value = of.response[index]?.[panel.quantity]
-      return at >= from - 4 && at <= to + 4 && value !== undefined ? [y(value)] : []
-    })
-  const free = (box: Box) =>
-    box.x >= LEFT + 4 &&
-    box.x + box.width <= x.range()[1]! - 4 &&
-    box.y >= panel.top + 2 &&
-    box.y + box.height <= panel.bottom - 2 &&
-    taken.every((other) => !overlaps(box, other)) &&
-    [curve, ...others].every((of) =>
-      heights(of, box.x, box.x + box.width).every((at) => at < box.y - 2 || at > box.y + box.height + 2),
-    )
-  for (const gap of [5, 14, 26, 42]) {
-    for (const share of [0.04, 0.12, 0.22, 0.34, 0.46, 0.58, 0.7, 0.82]) {
-      const left = LEFT + share * (x.range()[1]! - LEFT)
-      const own = heights(curve, left, left + size.width)
-      if (own.length === 0) continue
-      const above = { x: left, y: Math.min(...own) - gap - size.height, ...size }
-      const below = { x: left, y: Math.max(...own) + gap, ...size }
-      for (const box of [above, below]) if (free(box)) return box
-    }
-  }
-  return null
+  const xs = frequencies.map((frequency) => x(frequency))
+  const traces = curves.map(({ response }) => ({ xs, ys: response.map((point) => y(point[panel.quantity])) }))
+  const frame = { left: LEFT + 4, right: x.range()[1]! - 4, top: panel.top + 2, bottom: panel.bottom - 2 }
+  const placed: { curve: BodeCurve; box: Box }[] = []
+  curves.forEach((curve, index) => {
+    const covered = [...taken, ...placed.map(({ box }) => box)]
+    const isFree = (box: Box) =>
+      box.x >= frame.left &&
+      box.x + box.width <= frame.right &&
+      box.y >= frame.top &&
+      box.y + box.height <= frame.bottom &&
+      !covered.some((other) => overlaps(box, other)) &&
+      traces.every((trace) => misses(trace, box))
+    const box = besideTrace(traces[index]!, textWidth(curve.label, 13.4, 'condensed') + 4, frame).find(isFree)
+    if (box) placed.push({ curve, box })
+  })
+  return placed
+}
+
+/** Places just above and just below a curve, the nearest first. */
+function besideTrace(trace: Trace, width: number, frame: { readonly left: number; readonly right: number }): Box[] {
+  return NAME_GAPS.flatMap((gap) =>
+    NAME_STARTS.flatMap((share) => {
+      const left = LEFT + share * (frame.right + 4 - LEFT)
+      const own = heights(trace, left, left + width)
+      if (own.length === 0) return []
+      const size = { x: left, width, height: NAME_HEIGHT }
+      return [
+        { ...size, y: Math.min(...own) - gap - NAME_HEIGHT },
+        { ...size, y: Math.max(...own) + gap },
+      ]
+    }),
+  )
+}
+
+function heights({ xs, ys }: Trace, from: number, to: number): number[] {
+  return ys.filter((_, index) => xs[index]! >= from - 4 && xs[index]! <= to + 4)
+}
+
+function misses(trace: Trace, box: Box): boolean {
+  return heights(trace, box.x, box.x + box.width).every((at) => at < box.y - 2 || at > box.y + box.height + 2)
 }
 
 /** The curve between its points: straight over the logarithm of frequency. */
