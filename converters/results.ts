@@ -316,13 +316,15 @@ export interface CornerMargins {
 
 export interface Proposal {
   readonly type: CompensatorType
-  readonly method: 'k-factor' | 'placed'
+  readonly method: 'k-factor' | 'placed' | 'optimised'
   readonly crossover: number // Hz, the one asked for
   readonly parts: { readonly ideal: PartValues; readonly preferred: PartValues }
   readonly poles: readonly Root[] // of the preferred network
   readonly zeros: readonly Root[]
   /** Before and after snapping to preferred values. */
   readonly margins: { readonly ideal: CornerMargins; readonly preferred: CornerMargins }
+  /** V, largest deviation after half of the load range comes at nominal line; null where the loop does not settle. */
+  readonly loadStepDip: number | null
   readonly reasons: readonly string[]
   /** What still falls short of the targets, in sentences; empty when all hold. */
   readonly shortfalls: readonly string[]

@@ -7,7 +7,7 @@ export const PREFERRED_SERIES = ['E3', 'E6', 'E12', 'E24', 'E48', 'E96', 'E192']
 export type PreferredSeries = (typeof PREFERRED_SERIES)[number]
 
 /** The method by which a network was found. */
-export const SYNTHESIS_METHODS = ['k-factor', 'placed'] as const
+export const SYNTHESIS_METHODS = ['k-factor', 'placed', 'optimised'] as const
 
 const LONGEST_VALUE_LIST = 2000
 const ohms = z.number({ error: 'Give a number in Ω.' }).positive({ error: 'Must be greater than zero.' }).max(1e9)

@@ -115,6 +115,17 @@ export function placeNetwork(
   return synthesisProblem(amplifierTooSlow(wanted))
 }
 
+/** The zeros and poles that a network's parts make, the amplifier taken as ideal. */
+export function placementOf(setting: AmplifierSetting, { R1, R2, R3, C1, C2, C3 }: PartValues): Placement {
+  const main =
+    R2 === undefined || C1 === undefined
+      ? null
+      : { zero: 1 / (TAU * R2 * C1), pole: C2 ? (C1 + C2) / (TAU * R2 * C1 * C2) : null }
+  if (R1 === undefined || R3 === undefined || C3 === undefined) return { main, lead: null }
+  const lead = { zero: 1 / (TAU * (R1 + R3) * C3), pole: 1 / (TAU * (R3 + behindLead(setting, R1)) * C3) }
+  return { main, lead }
+}
+
 export function amplifierTooSlow({ omega, gain }: CrossoverGain): string {
   const kilohertz = (omega / TAU / 1e3).toPrecision(3)
   return `The amplifier cannot give a gain of ${gain.toPrecision(3)} at ${kilohertz} kHz with the phase that is needed.`
@@ -164,9 +175,13 @@ function feedbackParts({ zero, pole }: MainPair, total: number): PartValues {
 
 function leadParts(setting: AmplifierSetting, upperResistance: number, { zero, pole }: LeadPair): PartValues | null {
   const ratio = pole / zero
-  // R3's far end sees the summing point of an op-amp as ground, but the divider of a transconductance amplifier.
-  const lower = upperResistance * lowerRatio(setting)
-  const behind = setting.amplifier.kind === 'transconductance' ? 1 / (1 / upperResistance + 1 / lower) : 0
+  const behind = behindLead(setting, upperResistance)
   const R3 = (upperResistance - ratio * behind) / (ratio - 1)
   return R3 > 0 ? { R3, C3: 1 / (TAU * pole * (R3 + behind)) } : null
+}
+
+/** Ω that R3's far end sees: the summing point of an op-amp is ground, that of a transconductance amplifier its divider. */
+function behindLead(setting: AmplifierSetting, upperResistance: number): number {
+  if (setting.amplifier.kind !== 'transconductance') return 0
+  return 1 / (1 / upperResistance + 1 / (upperResistance * lowerRatio(setting)))
 }

@@ -3,15 +3,20 @@
  * their margins at every corner of line and load, and a plain no where nothing can work.
  */
 import type { DesignDocument } from '../document'
+import { closeLoop } from '../loop/closedLoop'
+import { stepResponse } from '../loop/stepResponse'
+import { eigenvalues } from '../numeric/eigen'
 import { describeNetworkRoots } from '../loop/networkRoles'
 import { invalid, parseDesign, problemsOf } from '../parse'
 import { formatQuantity } from '../quantities'
+import { closedLoopMap } from '../simulation/closedOrbit'
 import type { CompensatorProposals, Proposal } from '../results'
-import { boostFor, goalAt, type Attempt, type Goal } from './attempts'
+import { boostFor, goalAt, type Attempt, type AttemptRequest, type Goal } from './attempts'
 import { chooseCrossover, type Choice } from './chooseCrossover'
 import { readCorners, summariseCorners } from './cornerMargins'
 import { openCorners, type CornerPlants } from './cornerPlants'
-import { buildNetwork, networkRoots } from './networks'
+import { buildNetwork, networkRoots, networkStateSpace, type Network } from './networks'
+import { attemptOptimised } from './optimised'
 import { CompensatorOptions, type CompensatorOptionsInput } from './options'
 import { pairRoots, placeNetwork } from './placement'
 import { marginSlack, quickMargins } from './quickMargins'
@@ -53,7 +58,9 @@ export function proposeCompensator(design: unknown, options: CompensatorOptionsI
       : chooseCrossover({ plants, window, upperResistance, wanted, type, limits, size })
   if (choice.kind === 'refusal') return refused(choice.message)
   const { goal, ideal } = choice.attempts[0]
-  const attempts = placement ? [byHand(goal)] : choice.attempts
+  const attempts = placement
+    ? [byHand(goal)]
+    : withOptimised({ plants, upperResistance, goal, type }, choice.attempts, size)
   const evaluated = attempts.map((attempt) =>
     evaluate(plants, attempt, { stock, options: checked, window, byHand: placement !== undefined }),
   )
@@ -65,10 +72,13 @@ export function proposeCompensator(design: unknown, options: CompensatorOptionsI
       phaseBoost: boostFor(goal, document.targets.phaseMargin),
       reasons: suggestionReasons(plants, window, choice, type !== null),
     },
-    proposals: evaluated.sort(byMerit(document, goal.omega / (2 * Math.PI))),
+    proposals: explainedGain(evaluated).sort(byMerit(document, goal.omega / (2 * Math.PI))),
     refusal: null,
   }
 }
+
+/** Degrees. */
+const LITTLE_GAIN = 0.5
 
 function parseOptions(options: unknown): CompensatorOptions {
   const result = CompensatorOptions.safeParse(options)
@@ -107,6 +117,17 @@ function attemptByHand(
   return { method: 'placed', goal, ideal, ...quickMargins(plants, ideal.network, plants.design.targets) }
 }
 
+/** The attempts at the goal's crossover with the optimised one beside them. */
+function withOptimised(
+  request: AttemptRequest,
+  attempts: readonly Attempt[],
+  size: (attempt: Attempt) => Attempt,
+): readonly Attempt[] {
+  const here = attempts.filter(({ goal }) => goal.omega === request.goal.omega)
+  const optimised = attemptOptimised(request, here)
+  return optimised ? [size(optimised), ...attempts] : attempts
+}
+
 interface Evaluation {
   readonly stock: Stock
   readonly options: CompensatorOptions
@@ -132,9 +153,48 @@ function evaluate(plants: CornerPlants, attempt: Attempt, { stock, options, wind
     poles: roots.compensatorPoles,
     zeros: roots.compensatorZeros,
     margins,
+    loadStepDip: loadStepDip(plants, network),
     reasons: networkReasons(plants, { attempt, margins, options, byHand }),
-    shortfalls: shortfalls(plants, window, read, { ideal: ideal.parts, preferred: parts, options }),
+    shortfalls: [
+      ...shortfalls(plants, window, read, { ideal: ideal.parts, preferred: parts, options }),
+      ...switchingShortfall(plants, network),
+    ],
   }
+}
+
+/** A corner whose switched loop is unstable although its margins may look fine. */
+function switchingShortfall({ corners }: CornerPlants, network: Network): string[] {
+  const found = corners.find(
+    ({ plant }) => plant.periodMap.isStable && !closedLoopMap(plant.circuit, plant.orbit, network).isStable,
+  )
+  if (!found) return []
+  const [line, load] = [formatQuantity(found.lineVoltage, 'V'), formatQuantity(found.outputCurrent, 'A')]
+  return [
+    `At ${line} and ${load} the switched loop itself is unstable: more ripple reaches the comparator than its ramp can bear. Take a lower crossover, a larger ramp or less output ripple.`,
+  ]
+}
+
+/** Says so where moving zeros and poles brings next to nothing over the K factor. */
+function explainedGain(proposals: readonly Proposal[]): Proposal[] {
+  const worst = (proposal: Proposal | undefined) => proposal?.margins.ideal.worst.phaseMargin ?? null
+  const byFactor = worst(proposals.find(({ method }) => method === 'k-factor'))
+  return proposals.map((proposal) => {
+    const own = worst(proposal)
+    if (proposal.method !== 'optimised' || own === null || byFactor === null || own >= byFactor + LITTLE_GAIN)
+      return proposal
+    const reason =
+      'The K-factor network stands already where the most phase is: its zeros and poles are as far apart as a slow tail and the ripple allow.'
+    return { ...proposal, reasons: [...proposal.reasons, reason] }
+  })
+}
+
+/** Averaged model, nominal line: half of the load range added at its middle. */
+function loadStepDip({ design, corners: [nominal] }: CornerPlants, network: Network): number | null {
+  const system = closeLoop(nominal.plant.model, networkStateSpace(network))
+  if (eigenvalues(system.A).some(({ re }) => re >= 0)) return null
+  const { currentMinimum, currentMaximum } = design.output
+  const size = (currentMaximum - currentMinimum) / 2 || currentMaximum / 10
+  return stepResponse(system, 1, size, 10 / design.switchingFrequency).peakDeviation
 }
 
 /** At the suggested crossover first; there those that hold, then the one with more margin at its worst corner. */

@@ -12,6 +12,12 @@ export interface QuickMargins {
   readonly slack: number
   /** rad/s, the highest over the corners; 0 without one. */
   readonly highestCrossover: number
+  /** The least of each margin over the corners; null where none has one. */
+  readonly worst: {
+    readonly phaseMargin: number | null
+    readonly gainMargin: number | null
+    readonly isStable: boolean
+  }
 }
 
 type Targets = DesignDocument['targets']
@@ -24,13 +30,24 @@ export function quickMargins(plants: CornerPlants, network: Network, targets: Ta
   const gains = Array.from(omegas, (omega) => networkGain(network, omega))
   let slack = Infinity
   let highestCrossover = 0
+  const worst: { phaseMargin: number | null; gainMargin: number | null; isStable: boolean } = {
+    phaseMargin: null,
+    gainMargin: null,
+    isStable: true,
+  }
   for (const corner of corners) {
     const read = readCorner(omegas, gains, corner)
     slack = Math.min(slack, marginSlack(read, targets))
     highestCrossover = Math.max(highestCrossover, read.crossover)
+    worst.phaseMargin = least(worst.phaseMargin, read.phaseMargin)
+    worst.gainMargin = least(worst.gainMargin, read.gainMargin)
+    worst.isStable &&= read.isStable
   }
-  return { slack, highestCrossover }
+  return { slack, highestCrossover, worst }
 }
+
+const least = (a: number | null, b: number | null): number | null =>
+  a === null || b === null ? (a ?? b) : Math.min(a, b)
 
 /** The smaller of both margins, as a share of its target above it; a margin that does not exist cannot be short. */
 export function marginSlack(

@@ -83,6 +83,8 @@ function methodReason({ attempt: { method, ideal, goal }, byHand }: NetworkFacts
     const boost = boostOf(network, goal.omega)
     return `Zeros and poles stand around the crossover so that their boost of ${degrees(boost)} peaks there, K = ${kFactor(type, boost).toPrecision(3)} (Venable 1983).`
   }
+  if (method === 'optimised')
+    return 'Zeros and poles were moved together until the worst corner of line and load had the most phase margin at this crossover, the gain margin kept (Nelder and Mead 1965).'
   return 'Zeros stand at the plant’s own poles, or as far below as the corners ask for; poles at its ESR zero, its right-half-plane zero or half the switching frequency (common practice, no source).'
 }
 
