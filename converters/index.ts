@@ -1,10 +1,12 @@
 /** What the rest of the product may use of the engine. Every function takes unchecked input and names what is wrong. */
-import { analyseDesign, type AnalysisOptions } from './analysis'
+import { analyseDesign, operatingPointOf, type AnalysisOptions } from './analysis'
 import { cornersOf, type CornerOptions } from './corners'
 import { invalid, parseDesign, problemsOf } from './parse'
 import { simulateLoop } from './simulation/simulate'
 import { SimulationOptions, type SimulationOptionsInput } from './simulation/scenario'
-import type { Analysis, CornerSet, Simulation } from './results'
+import { rootLocusOf } from './loop/rootLocus'
+import type { OperatingPointRequest } from './document'
+import type { Analysis, CornerSet, RootLocus, Simulation } from './results'
 
 /** Operating point, poles and zeros, responses, loop, margins and step responses at one line voltage and load. */
 export function analyse(design: unknown, options: AnalysisOptions = {}): Analysis {
@@ -18,6 +20,12 @@ export function analyseCorners(design: unknown, options: CornerOptions = {}): Co
 
 export { proposeCompensator } from './compensators/propose'
 export { proposeStage } from './quickStart'
+/** Where the closed-loop poles go as the loop gain is scaled. */
+export function analyseRootLocus(design: unknown, point: OperatingPointRequest = {}): RootLocus {
+  const document = parseDesign(design)
+  return rootLocusOf(document, operatingPointOf(document, point))
+}
+
 /** The closed loop cycle by cycle through one scenario, with its period map and the loop gain that includes ripple. */
 export function simulate(design: unknown, options: SimulationOptionsInput = {}): Simulation {
   const document = parseDesign(design)

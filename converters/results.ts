@@ -168,6 +168,17 @@ export interface StepResponse {
   readonly modes: readonly Mode[] // largest first
 }
 
+/** Closed-loop poles of the averaged model over the loop's gain. */
+export interface RootLocus {
+  readonly gainsDb: readonly number[] // beside the present gain
+  /** One a pole, a point a gain; rad/s. */
+  readonly branches: readonly (readonly { readonly real: number; readonly imaginary: number }[])[]
+  /** Index of the present gain, 0 dB. */
+  readonly present: number
+  /** Between these gains the loop is stable; null in one of them: to the end of what is drawn. Null if unstable now. */
+  readonly stableRange: { readonly lowestDb: number | null; readonly highestDb: number | null } | null
+}
+
 /** Read off a simulated transient; deviations are of the mean over a period from the wanted output. */
 export interface TransientReadings {
   readonly peakDeviation: number // V, signed
