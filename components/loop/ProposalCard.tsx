@@ -31,7 +31,7 @@ export interface ProposalCardProps {
 export function ProposalCard({ proposal, isFirst, targets }: ProposalCardProps) {
   const theme = useTheme()
   const { design } = useDraft()
-  const { type, method, parts, margins, reasons, shortfalls } = proposal
+  const { type, method, parts, margins, loadStepDip, reasons, shortfalls } = proposal
   const name = `Type ${type}, ${METHODS[method]}`
   const isFitted =
     design.compensator?.type === type &&
@@ -87,6 +87,11 @@ export function ProposalCard({ proposal, isFirst, targets }: ProposalCardProps) 
         </Text>
         <VerdictWord verdict={(worst.isStable && verdictOf(worst.phaseMargin, targets.phaseMargin, '°')) || 'short'} />
       </View>
+      {loadStepDip === null ? null : (
+        <Text variant="small" tone="quiet">
+          {`Half of the load range coming at once moves the output by ${figure(loadStepDip, 'V')} at most.`}
+        </Text>
+      )}
       {shortfalls.length > 0 ? (
         <Notice kind="caution" title="Still short">
           {shortfalls.map((text) => (
