@@ -38,6 +38,7 @@ const TITLES: Readonly<Record<Warning['code'], string>> = {
   'several-crossovers': 'Several crossovers',
   'ripple-large': 'Large ripple',
   'input-filter': 'Input filter too near the converter',
+  'optocoupler-bias': 'Too little current for the optocoupler',
   'hazardous-voltage': 'Hazardous voltage',
 }
 

@@ -16,7 +16,7 @@ const NONE = { poles: [], zeros: [] }
 export function DesignRule() {
   const theme = useTheme()
   const { isWide } = useLayout()
-  const { design } = useDraft()
+  const { design, awaitsProposal } = useDraft()
   const { analysis } = useDesignAnalysis()
   const { data: proposals } = useProposals()
   const loop = design.compensator ? analysis?.loop : null
@@ -27,7 +27,8 @@ export function DesignRule() {
         plant={analysis ? named(analysis.plant.poles, analysis.plant.zeros) : NONE}
         network={loop ? named(loop.compensatorPoles, loop.compensatorZeros) : NONE}
         window={proposals?.window ?? null}
-        crossover={loop ? (analysis?.margins?.crossover ?? null) : null}
+        // While a network for another crossover is being looked for, the handle stays where it was let go.
+        crossover={loop && !awaitsProposal ? (analysis?.margins?.crossover ?? null) : null}
         wanted={design.targets.crossover ?? proposals?.suggestion?.crossover ?? null}
         onWant={draftStore.wantCrossover}
       />

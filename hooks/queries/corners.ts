@@ -3,6 +3,7 @@ import type { DesignDocument } from '@/converters/document'
 import { api } from '@/hooks/api'
 import { frequencyGrid } from '@/hooks/frequencyGrid'
 import { useDebounced } from '@/hooks/useDebounced'
+import { circuitOf } from './circuitOf'
 import { CornerSet, type CornersRequestInput } from '@/server/contract/corners'
 
 /** A row of corners is some ten times one analysis: it follows once the typing pauses. */
@@ -12,7 +13,7 @@ const PAUSE = 150 // ms
 export function useCornersQuery(latest: DesignDocument) {
   const design = useDebounced(latest, PAUSE)
   const request: CornersRequestInput = {
-    design: { ...design, name: undefined },
+    design: circuitOf(design),
     frequencies: frequencyGrid(design.switchingFrequency),
   }
   return useQuery({
