@@ -223,6 +223,7 @@ export type WarningCode =
   | 'several-crossovers'
   | 'ripple-large'
   | 'input-filter' // its impedance comes too near the converter's
+  | 'optocoupler-bias' // the LED resistor leaves too little current
   | 'hazardous-voltage'
 
 export interface Warning {

@@ -1,4 +1,5 @@
 /** What a reviewer would point at, in sentences. */
+import { largestLedResistance } from './compensators/shuntOptocoupler'
 import type { DesignDocument } from './document'
 import type { Analysis, ResponseCurve, Warning } from './results'
 
@@ -17,6 +18,7 @@ export function warningsFor(design: DesignDocument, analysis: Computed, rightHal
     ...marginWarnings(design, analysis, rightHalfPlaneZero),
     ...modelWarnings(analysis),
     ...filterWarnings(analysis),
+    ...biasWarnings(design),
     ...stageWarnings(design, analysis),
   ]
 }
@@ -125,6 +127,27 @@ function firstParting(frequencies: readonly number[], a: ResponseCurve, b: Respo
     return Math.abs(point.gainDb - other.gainDb) > APART.gainDb || apart > APART.phaseDeg
   })
   return index < 0 ? null : frequencies[index]!
+}
+
+/** V of the pull-up where the document does not say; common practice, no source. */
+const USUAL_SUPPLY = 5
+
+/** A LED resistor so large that the optocoupler cannot pull its collector down. */
+function biasWarnings({ amplifier, output, sense }: DesignDocument): Warning[] {
+  if (amplifier.kind !== 'shunt-optocoupler') return []
+  const supplyVoltage = amplifier.outputLimits?.maximum ?? USUAL_SUPPLY
+  const largest = largestLedResistance({
+    ...amplifier,
+    outputVoltage: output.voltage,
+    referenceVoltage: sense.referenceVoltage,
+    supplyVoltage,
+  })
+  if (largest !== null && amplifier.ledResistance <= largest) return []
+  const message =
+    largest === null
+      ? 'The output voltage leaves nothing for the LED above the shunt reference; no LED resistor can work.'
+      : `With this LED resistor the optocoupler cannot pull its collector down from ${supplyVoltage} V; it may be at most ${round(largest)} Ω.`
+  return [{ code: 'optocoupler-bias', message, field: 'amplifier.ledResistance' }]
 }
 
 function filterWarnings({ inputFilter }: Computed): Warning[] {

@@ -8,10 +8,11 @@ import { DesignError } from '../errors'
 import type { Complex } from '../numeric/complex'
 import { eigenvalues, invariantZeros } from '../numeric/eigen'
 import { opAmpGain, opAmpStateSpace, type OpAmpNetwork } from './opAmp'
+import { shuntOptocouplerGain, shuntOptocouplerStateSpace, type ShuntOptocouplerNetwork } from './shuntOptocoupler'
 import type { StateSpace } from './stateSpace'
 import { transconductanceGain, transconductanceStateSpace, type TransconductanceNetwork } from './transconductance'
 
-export type Network = OpAmpNetwork | TransconductanceNetwork
+export type Network = OpAmpNetwork | TransconductanceNetwork | ShuntOptocouplerNetwork
 
 /** Which parts each type cannot do without. C2 may be left out of types II and III: its pole is then not fitted. */
 const NEEDED: Readonly<Record<CompensatorType, readonly CompensatorPart[]>> = {
@@ -30,23 +31,31 @@ export type AmplifierSetting = Pick<DesignDocument, 'amplifier' | 'sense' | 'out
 /**
  * The network that a design's amplifier, divider and compensator parts make.
  * @throws DesignError 'invalid-compensator' at the missing part, 'invalid-document' for a reference above the output,
- * 'not-yet-supported' for an amplifier that cannot be computed.
+ * 'invalid-compensator' for a type that the amplifier does not have.
  */
 export function buildNetwork(setting: AmplifierSetting, compensator: CompensatorChoice): Network {
   const { type, parts } = compensator
+  const { amplifier } = setting
+  if (amplifier.kind === 'shunt-optocoupler' && type === 'I') {
+    throw DesignError.at(
+      'invalid-compensator',
+      'compensator.type',
+      'A shunt reference with an optocoupler has no type I: its LED hangs on the output and adds a zero. Choose type II or III.',
+    )
+  }
   for (const part of NEEDED[type]) {
+    if (part === 'R2' && amplifier.kind === 'shunt-optocoupler') continue
     if (!parts[part]) {
       const field = `compensator.parts.${part}`
       throw DesignError.at('invalid-compensator', field, `A type ${type} network needs ${part}; give it a value.`)
     }
   }
-  const { amplifier } = setting
   const upper = parts.R1 || setting.sense.upperResistance
   const shared = {
     type,
     upperConductance: 1 / upper,
     lowerConductance: 1 / (upper * lowerRatio(setting)),
-    R2: type === 'I' ? 0 : parts.R2!,
+    R2: type === 'I' ? 0 : (parts.R2 ?? 0),
     C1: parts.C1!,
     C2: type === 'I' ? 0 : (parts.C2 ?? 0),
     R3: type === 'III' ? parts.R3! : 0,
@@ -61,12 +70,23 @@ export function buildNetwork(setting: AmplifierSetting, compensator: Compensator
       const { transconductance, outputResistance } = amplifier
       return { ...shared, kind: 'transconductance', transconductance, outputConductance: 1 / outputResistance }
     }
-    case 'shunt-optocoupler':
-      throw DesignError.at(
-        'not-yet-supported',
-        'amplifier.kind',
-        'A shunt reference with an optocoupler cannot be computed yet; choose an op-amp or a transconductance amplifier.',
-      )
+    case 'shunt-optocoupler': {
+      const { currentTransferRatio, pullUpResistance, ledResistance, optocouplerPole } = amplifier
+      return {
+        type,
+        kind: 'shunt-optocoupler',
+        upperConductance: shared.upperConductance,
+        R2: parts.R2 ?? 0,
+        C1: shared.C1,
+        C2: shared.C2,
+        R3: shared.R3,
+        C3: shared.C3,
+        currentTransferRatio,
+        pullUpResistance,
+        ledResistance,
+        optocouplerPole: 2 * Math.PI * optocouplerPole,
+      }
+    }
   }
 }
 
@@ -85,12 +105,26 @@ export function lowerRatio({ sense, output }: AmplifierSetting): number {
 
 /** Complex gain from output voltage to control voltage at `omega` (rad/s, above zero), inversion removed. */
 export function networkGain(network: Network, omega: number): Complex {
-  return network.kind === 'op-amp' ? opAmpGain(network, omega) : transconductanceGain(network, omega)
+  switch (network.kind) {
+    case 'op-amp':
+      return opAmpGain(network, omega)
+    case 'transconductance':
+      return transconductanceGain(network, omega)
+    case 'shunt-optocoupler':
+      return shuntOptocouplerGain(network, omega)
+  }
 }
 
 /** The same as state equations: the states are the network's capacitor voltages and, for an op-amp, its output. */
 export function networkStateSpace(network: Network): StateSpace {
-  return network.kind === 'op-amp' ? opAmpStateSpace(network) : transconductanceStateSpace(network)
+  switch (network.kind) {
+    case 'op-amp':
+      return opAmpStateSpace(network)
+    case 'transconductance':
+      return transconductanceStateSpace(network)
+    case 'shunt-optocoupler':
+      return shuntOptocouplerStateSpace(network)
+  }
 }
 
 /** Poles and zeros in rad/s, the amplifier's own included. */
@@ -112,7 +146,8 @@ export function networkRoots(network: Network): { readonly poles: Complex[]; rea
  * limit. Where no capacitor holds a transconductance amplifier's output, the node's own stray capacitance does.
  */
 export function networkWithHeldOutput(network: Network): { readonly network: Network; readonly outputState: number } {
-  if (network.kind === 'op-amp') return { network, outputState: networkStateSpace(network).A.length - 1 }
+  // The op-amp's own output, or the optocoupler's collector, comes last.
+  if (network.kind !== 'transconductance') return { network, outputState: networkStateSpace(network).A.length - 1 }
   if (network.type === 'I') return { network, outputState: 0 }
   return { network: { ...network, C2: network.C2 || STRAY_CAPACITANCE }, outputState: 1 }
 }

@@ -117,6 +117,13 @@ export function placeNetwork(
 
 /** The zeros and poles that a network's parts make, the amplifier taken as ideal. */
 export function placementOf(setting: AmplifierSetting, { R1, R2, R3, C1, C2, C3 }: PartValues): Placement {
+  if (setting.amplifier.kind === 'shunt-optocoupler' && R1 !== undefined && C1 !== undefined) {
+    const { pullUpResistance, ledResistance } = setting.amplifier
+    return {
+      main: { zero: 1 / (TAU * (R1 + (R2 ?? 0)) * C1), pole: C2 ? 1 / (TAU * pullUpResistance * C2) : null },
+      lead: R3 && C3 ? { zero: 1 / (TAU * (ledResistance + R3) * C3), pole: 1 / (TAU * R3 * C3) } : null,
+    }
+  }
   const main =
     R2 === undefined || C1 === undefined
       ? null
@@ -139,6 +146,8 @@ export function idealNetwork(
   { omega, gain }: CrossoverGain,
 ): Synthesis {
   const { main, lead } = placement
+  if (setting.amplifier.kind === 'shunt-optocoupler')
+    return optocouplerNetwork(setting, setting.amplifier, upperResistance, placement, { omega, gain })
   const shape = pairGain(main, omega) * pairGain(lead, omega)
   const total = (integratorConductance(setting, upperResistance) * shape) / (omega * gain)
   const feedback = main === null ? { C1: total } : feedbackParts(main, total)
@@ -151,6 +160,43 @@ export function idealNetwork(
   }
   const type = typeOf(placement)
   const parts = { R1: upperResistance, ...feedback, ...across }
+  return { kind: 'network', type, parts, network: buildNetwork(setting, { type, parts }) }
+}
+
+/**
+ * Type II and III of a shunt reference with an optocoupler. Its fast lane alone has a gain of CTR·R_pull/R_LED, which the
+ * network can raise but not lower.
+ */
+function optocouplerNetwork(
+  setting: AmplifierSetting,
+  amplifier: Extract<AmplifierSetting['amplifier'], { kind: 'shunt-optocoupler' }>,
+  R1: number,
+  placement: Placement,
+  { omega, gain }: CrossoverGain,
+): Synthesis {
+  const { main, lead } = placement
+  if (main === null)
+    return synthesisProblem('A shunt reference with an optocoupler has no type I; its LED adds a zero.')
+  const { currentTransferRatio, pullUpResistance, ledResistance } = amplifier
+  const fastLane = (currentTransferRatio * pullUpResistance) / ledResistance
+  const C1 = (fastLane * pairGain(main, omega) * pairGain(lead, omega)) / (omega * gain * R1)
+  const R2 = 1 / (TAU * main.zero * C1) - R1
+  if (R2 < 0) {
+    const least = (ledResistance * R1) / (R1 + R2)
+    return synthesisProblem(
+      `The optocoupler’s fast lane alone has more gain than the crossover allows; the LED resistor would have to be about ${least.toPrecision(2)} Ω, as far as its bias permits, or the crossover higher.`,
+    )
+  }
+  const C2 = main.pole === null ? undefined : 1 / (TAU * main.pole * pullUpResistance)
+  const R3 = lead && ledResistance / (lead.pole / lead.zero - 1)
+  const parts: PartValues = {
+    R1,
+    R2,
+    C1,
+    ...(C2 !== undefined && { C2 }),
+    ...(R3 !== null && lead !== null && { R3, C3: 1 / (TAU * lead.pole * R3) }),
+  }
+  const type = typeOf(placement)
   return { kind: 'network', type, parts, network: buildNetwork(setting, { type, parts }) }
 }
 

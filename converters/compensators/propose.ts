@@ -90,7 +90,7 @@ function parseOptions(options: unknown): CompensatorOptions {
 
 /** Refuses an amplifier or a divider that cannot be computed before anything else is. */
 function checkAmplifier(design: DesignDocument): void {
-  buildNetwork(design, { type: 'I', parts: { C1: 1e-9 } })
+  buildNetwork(design, { type: 'II', parts: { R2: 1e3, C1: 1e-9 } })
 }
 
 /** Current mode that oscillates by itself cannot be cured by the voltage loop. */

@@ -18,6 +18,9 @@ import { periodMatrix } from '../switched/periodMap'
 import { closeCircuit, type ClosedCircuit } from './closedCircuit'
 import { DesignError } from '../errors'
 
+/** An ideal integrator is at rest wherever it stands; with a trace of leak it stands near zero, and the bias does the rest. */
+const INTEGRATOR_LEAK = 1e-9
+
 /** Instants in the on time at which the comparator is checked for an earlier crossing. */
 const CHECKS = 64
 
@@ -85,15 +88,15 @@ function joinSegments(circuit: ClosedCircuit, orbit: Orbit): Segment[] {
     map = product(own, map, m)
     offset = next
   })
-  const matrix = map.map((value, i) => (i % (m + 1) === 0 ? 1 : 0) - value)
-  if (!solveReal(matrix, m, offset, 1)) {
+  const rest = restOf(map, offset, 0) ?? restOf(map, offset, INTEGRATOR_LEAK)
+  if (!rest) {
     throw DesignError.at(
       'no-operating-point',
       'compensator',
       'The network has no steady answer to the ripple of the output.',
     )
   }
-  let amplifier: Float64Array = offset
+  let amplifier = rest
   return orbit.segments.map((segment, k) => {
     const start = Float64Array.from([...segment.start, ...amplifier])
     const end = advance(flows[k]!, start)
@@ -102,6 +105,14 @@ function joinSegments(circuit: ClosedCircuit, orbit: Orbit): Segment[] {
     end.set(segment.end)
     return { interval: intervals[k]!, duration: segment.duration, start, end, transition: flows[k]!.E }
   })
+}
+
+/** The state that x → map·x + offset leaves as it is; null if there is no single one. */
+function restOf(map: Float64Array, offset: Float64Array, leak: number): Float64Array | null {
+  const m = offset.length
+  const matrix = map.map((value, i) => (i % (m + 1) === 0 ? 1 + leak : 0) - value)
+  const rest = Float64Array.from(offset)
+  return solveReal(matrix, m, rest, 1) ? rest : null
 }
 
 /** States at equally spaced instants of a segment. */

@@ -22,6 +22,8 @@ import { createSimulator, type Cycle, type Limits } from './simulator'
 /** Periods at rest before anything happens. */
 const BEFORE = 20
 const LOOP_FREQUENCIES = 120
+/** rad/s; a millionth of what any loop here works at. */
+const LEAKAGE = 1e-3
 
 interface Plan {
   readonly lineVoltage: number
@@ -147,7 +149,10 @@ function limitsOf(design: DesignDocument, { circuit }: ClosedOrbit): Limits {
  */
 function atRest({ circuit }: ClosedOrbit, powerStates: number, limits: Limits): Float64Array {
   const m = circuit.states.length - powerStates
-  const own = circuit.on.A.slice(powerStates).map((row) => row.slice(powerStates))
+  // A trace of leakage gives an ideal integrator one such state too.
+  const own = circuit.on.A.slice(powerStates).map((row, i) =>
+    row.slice(powerStates).map((value, j) => (i === j ? value - LEAKAGE : value)),
+  )
   const drive = Float64Array.from(circuit.on.B.slice(powerStates), (row) => row[TARGET]!)
   const start = new Float64Array(circuit.states.length)
   if (!solveReal(flatten(own), m, drive, 1)) return start

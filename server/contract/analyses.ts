@@ -126,6 +126,7 @@ const Warning = z.object({
     'several-crossovers',
     'ripple-large',
     'input-filter',
+    'optocoupler-bias',
     'hazardous-voltage',
   ]),
   message: z.string(),

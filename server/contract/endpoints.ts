@@ -7,19 +7,27 @@ import { CornerSet, CornersRequest } from '@/server/contract/corners'
 import type { ProblemCode } from '@/server/contract/problems'
 import { Sample, SampleList, SampleSlug } from '@/server/contract/samples'
 import { Simulation, SimulationRequest } from '@/server/contract/simulations'
+import { SpreadRun, SpreadRunId, SpreadRunRequest } from '@/server/contract/spreadRuns'
 import { StageProposal, StageProposalRequest } from '@/server/contract/stageProposals'
+import { ToleranceCornerSet, ToleranceCornersRequest } from '@/server/contract/toleranceCorners'
 
 export const API_ROOT = '/api/v1'
 
 export interface Endpoint {
   readonly operation: string
-  readonly method: 'get' | 'post'
+  readonly method: 'get' | 'post' | 'delete'
   /** Below the root; parameters in braces. */
   readonly path: string
   readonly summary: string
   readonly parameters?: Readonly<Record<string, z.ZodType>>
   readonly request?: { readonly name: string; readonly schema: z.ZodType }
-  readonly response: { readonly name: string; readonly schema: z.ZodType; readonly description: string }
+  readonly response: {
+    readonly name: string
+    readonly schema: z.ZodType
+    readonly description: string
+    /** 202 where the work goes on after the answer, which then says in Location where to ask for it. */
+    readonly status?: 202
+  }
   readonly problems: readonly ProblemCode[]
 }
 
@@ -34,6 +42,8 @@ const COMPUTE_PROBLEMS: readonly ProblemCode[] = [
   'busy',
   'computation-stopped',
 ]
+
+const RUN_PROBLEMS: readonly ProblemCode[] = ['not-found', 'too-many-requests', 'unexpected']
 
 export const ENDPOINTS: readonly Endpoint[] = [
   {
@@ -53,6 +63,47 @@ export const ENDPOINTS: readonly Endpoint[] = [
     request: { name: 'CornersRequest', schema: CornersRequest },
     response: { name: 'CornerSet', schema: CornerSet, description: 'The corners.' },
     problems: COMPUTE_PROBLEMS,
+  },
+  {
+    operation: 'analyseToleranceCorners',
+    method: 'post',
+    path: '/tolerance-corners',
+    summary: 'Computes the margins at every combination of line, load and the ends of the tolerances.',
+    request: { name: 'ToleranceCornersRequest', schema: ToleranceCornersRequest },
+    response: { name: 'ToleranceCornerSet', schema: ToleranceCornerSet, description: 'The corners, the worst named.' },
+    problems: COMPUTE_PROBLEMS,
+  },
+  {
+    operation: 'startSpreadRun',
+    method: 'post',
+    path: '/spread-runs',
+    summary: 'Starts a statistical run over line, load and tolerances, which goes on when its client leaves.',
+    request: { name: 'SpreadRunRequest', schema: SpreadRunRequest },
+    response: {
+      name: 'SpreadRun',
+      schema: SpreadRun,
+      description: 'The run, taken in; Location says where to follow it.',
+      status: 202,
+    },
+    problems: [...COMPUTE_PROBLEMS, 'too-many-runs', 'not-ready'],
+  },
+  {
+    operation: 'getSpreadRun',
+    method: 'get',
+    path: '/spread-runs/{id}',
+    summary: 'Gets a statistical run: how far it is, what can be said so far, the result once it is done.',
+    parameters: { id: SpreadRunId },
+    response: { name: 'SpreadRun', schema: SpreadRun, description: 'The run.' },
+    problems: RUN_PROBLEMS,
+  },
+  {
+    operation: 'cancelSpreadRun',
+    method: 'delete',
+    path: '/spread-runs/{id}',
+    summary: 'Cancels a statistical run that is not finished; one that is stays as it is.',
+    parameters: { id: SpreadRunId },
+    response: { name: 'SpreadRun', schema: SpreadRun, description: 'The run as it ended.' },
+    problems: RUN_PROBLEMS,
   },
   {
     operation: 'proposeCompensators',

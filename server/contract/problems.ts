@@ -11,6 +11,7 @@ export const PROBLEMS = {
   'unsupported-media-type': { status: 415, title: 'The request must be JSON.' },
   'design-refused': { status: 422, title: 'This design cannot be computed as it stands.' },
   'too-many-requests': { status: 429, title: 'Too many requests in a short time.' },
+  'too-many-runs': { status: 429, title: 'Enough statistical runs of yours are under way.' },
   unexpected: { status: 500, title: 'Something went wrong on our side.' },
   busy: { status: 503, title: 'All computing is taken at the moment.' },
   'computation-stopped': { status: 503, title: 'The computation took too long and was stopped.' },

@@ -250,15 +250,4 @@ describe('a network that cannot be built', () => {
     const problem = build({ sense: { ...sense, referenceVoltage: 5 } }, typeThree)
     expect(problem).toEqual({ code: 'invalid-document', field: 'sense.referenceVoltage' })
   })
-
-  it('says that a shunt reference with an optocoupler is not there yet', () => {
-    const amplifier = {
-      kind: 'shunt-optocoupler',
-      currentTransferRatio: 1,
-      pullUpResistance: 1e3,
-      ledResistance: 1e3,
-      optocouplerPole: 1e4,
-    } as const
-    expect(build({ amplifier }, typeThree)).toEqual({ code: 'not-yet-supported', field: 'amplifier.kind' })
-  })
 })

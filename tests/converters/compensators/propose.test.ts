@@ -291,15 +291,4 @@ describe('bad input is named at its field', () => {
   ])('%s', (_, design, options, field) => {
     expect(problemOf(design, options)?.field).toBe(field)
   })
-
-  it('an optocoupler says that it is not there yet', () => {
-    const amplifier = {
-      kind: 'shunt-optocoupler',
-      currentTransferRatio: 1,
-      pullUpResistance: 1e3,
-      ledResistance: 1e3,
-      optocouplerPole: 1e4,
-    } as const
-    expect(problemOf({ ...logicRail, amplifier })).toEqual({ code: 'not-yet-supported', field: 'amplifier.kind' })
-  })
 })
