@@ -35,6 +35,12 @@ interface Change {
   readonly conductance: number // S
 }
 
+/** Thousands of members are made one after another; larger arrays of their own would keep the garbage collector busy. */
+interface Scratch {
+  readonly z: Float64Array
+  readonly feedback: Float64Array
+}
+
 /**
  * @param base - any member of the family.
  * @returns the circuit of another member, whose document differs from the base's in nothing that shapes the network otherwise.
@@ -42,6 +48,11 @@ interface Change {
 export function circuitFamily(base: Circuit): (design: DesignDocument, point: PlantPoint) => Circuit {
   const capacitors = capacitorStates(base)
   const baseLoad = linearLoad(base.design, base.outputCurrent)
+  const ports = capacitors.length + 1
+  const scratch: Scratch = {
+    z: new Float64Array(ports * (base.states.length + base.inputs.length)),
+    feedback: new Float64Array(ports * ports),
+  }
   const stops = base.canStop && base.design.rectifier.kind === 'diode'
   return function member(design, { lineVoltage, outputCurrent }) {
     const load = linearLoad(design, outputCurrent)
@@ -55,9 +66,9 @@ export function circuitFamily(base: Circuit): (design: DesignDocument, point: Pl
       esr: capacitors.map((capacitor, k) => values[k]!.esr - capacitor.base.esr),
       conductance: load.conductance - baseLoad.conductance,
     }
-    const on = changed(base.on, capacitors, change)
-    const off = changed(base.off, capacitors, change)
-    const idle = stops ? changed(base.idle, capacitors, change) : base.idle
+    const on = changed(base.on, capacitors, change, scratch)
+    const off = changed(base.off, capacitors, change, scratch)
+    const idle = stops ? changed(base.idle, capacitors, change, scratch) : base.idle
     if (!on || !off || !idle) return buildCircuit(design, lineVoltage, outputCurrent)
     return {
       ...base,
@@ -111,13 +122,13 @@ function changed(
   { A, B, C, D }: Interval,
   capacitors: readonly CapacitorState[],
   { rates, esr, conductance }: Change,
+  { z, feedback }: Scratch,
 ): Interval | null {
   const n = A.length
   const width = n + B[0]!.length
   const ports = capacitors.length + 1
   const last = ports - 1
-  /** Coefficients over [x, u] of the current of capacitor p, or of the output voltage. */
-  const z = new Float64Array(ports * width)
+  // Coefficients over [x, u] of the current of capacitor p, or of the output voltage.
   for (let p = 0; p < ports; p++) {
     const capacitor = capacitors[p]
     const scale = capacitor ? capacitor.base.capacitance : 1
@@ -126,35 +137,35 @@ function changed(
     for (let j = 0; j < n; j++) z[p * width + j] = scale * overStates[j]!
     for (let j = n; j < width; j++) z[p * width + j] = scale * overInputs[j - n]!
   }
-  const feedback = new Float64Array(ports * ports)
   for (let p = 0; p < ports; p++) {
     for (let q = 0; q < last; q++) feedback[p * ports + q] = -z[p * width + capacitors[q]!.state]! * esr[q]!
     feedback[p * ports + last] = -z[p * width + n + LOAD]! * conductance
     feedback[p * ports + p]! += 1
   }
   if (!solveReal(feedback, ports, z, width)) return null
+  const changedA: number[][] = []
+  const changedB: number[][] = []
+  const changedC: number[][] = []
+  const changedD: number[][] = []
   /** A row of the base, with its share of what z feeds back. */
-  const carry = (overStates: readonly number[], overInputs: readonly number[], rate: number): [number[], number[]] => {
-    const states = overStates.slice()
-    const inputs = overInputs.slice()
-    for (let p = 0; p < ports; p++) {
-      const share = p < last ? overStates[capacitors[p]!.state]! * esr[p]! : overInputs[LOAD]! * conductance
+  for (let row = 0; row < n + C.length; row++) {
+    const isState = row < n
+    const states = (isState ? A[row]! : C[row - n]!).slice()
+    const inputs = (isState ? B[row]! : D[row - n]!).slice()
+    const loadShare = inputs[LOAD]! * conductance
+    for (let p = last; p >= 0; p--) {
+      const share = p === last ? loadShare : (isState ? A[row]! : C[row - n]!)[capacitors[p]!.state]! * esr[p]!
       if (share === 0) continue
       for (let j = 0; j < n; j++) states[j]! += share * z[p * width + j]!
       for (let j = n; j < width; j++) inputs[j - n]! += share * z[p * width + j]!
     }
-    if (rate !== 1) {
-      for (let j = 0; j < states.length; j++) states[j]! *= rate
+    if (isState) {
+      const rate = rates[row]!
+      for (let j = 0; j < n; j++) states[j]! *= rate
       for (let j = 0; j < inputs.length; j++) inputs[j]! *= rate
     }
-    return [states, inputs]
+    ;(isState ? changedA : changedC).push(states)
+    ;(isState ? changedB : changedD).push(inputs)
   }
-  const stateRows = A.map((row, i) => carry(row, B[i]!, rates[i]!))
-  const measureRows = C.map((row, m) => carry(row, D[m]!, 1))
-  return {
-    A: stateRows.map(([states]) => states),
-    B: stateRows.map(([, inputs]) => inputs),
-    C: measureRows.map(([states]) => states),
-    D: measureRows.map(([, inputs]) => inputs),
-  }
+  return { A: changedA, B: changedB, C: changedC, D: changedD }
 }

@@ -1,7 +1,7 @@
 /** From one set of part values to its margins, by either model. */
 import { closeLoop } from '../loop/closedLoop'
 import { fittedNetwork } from '../compensators/fitted'
-import { networkGain, networkStateSpace, type Network } from '../compensators/networks'
+import { buildNetwork, networkGain, networkStateSpace, type Network } from '../compensators/networks'
 import { buildCircuit, type Circuit } from '../circuit'
 import type { DesignDocument } from '../document'
 import { DesignError } from '../errors'
@@ -10,12 +10,12 @@ import type { Complex } from '../numeric/complex'
 import { eigenvalues } from '../numeric/eigen'
 import type { MarginSummary } from '../results'
 import { eventsOf } from '../switched/events'
-import { findOrbit } from '../switched/orbit'
+import { findContinuousOrbit, findOrbit } from '../switched/orbit'
 import { periodMatrix } from '../switched/periodMap'
 import { switchedResponses } from '../switched/response'
 import { averagedPoint, type AveragedPoint } from './averagedPoint'
 import { circuitFamily } from './circuitFamily'
-import { fastMargins, marginGrid, type LoopShape } from './fastMargins'
+import { marginReader, type LoopShape } from './fastMargins'
 import type { SpreadModel } from './options'
 import { controlToOutput } from './plantResponse'
 import type { Sample } from './variation'
@@ -26,6 +26,7 @@ export interface Evaluation {
   readonly isModelled: boolean
   readonly dutyCycle: number
   readonly margins: MarginSummary
+  /** This and the poles hold as long as the sample does. */
   readonly loopGain: LoopGain
   /** rad/s, of the averaged model with its network. */
   readonly closedLoopPoles: () => Complex[]
@@ -46,19 +47,20 @@ export function evaluatorFor(base: DesignDocument, model: SpreadModel): Evaluato
   const { line, output, switchingFrequency } = base
   const centre = buildCircuit(base, line.nominal, output.currentMaximum)
   const member = circuitFamily(centre)
-  const grid = marginGrid(switchingFrequency)
-  const guess = findOrbit(centre).dutyCycle
+  const readMargins = marginReader(switchingFrequency)
+  const guess = continuousDuty(centre)
   const open = model === 'averaged' ? openAveraged : openSwitched
   return function evaluate({ design, point }) {
     try {
       const circuit = member(design, point)
-      const network = requireNetwork(design)
-      const { respond, shape, ...found } = open(circuit, guess)
+      const network = buildNetwork(design, design.compensator!)
+      const { conduction, dutyCycle, respond, shape } = open(circuit, guess)
       const loopGain = times(respond, network)
       return {
-        ...found,
-        isModelled: found.conduction === 'continuous' || circuit.canStop,
-        margins: fastMargins(loopGain, grid, shape),
+        conduction,
+        dutyCycle,
+        isModelled: conduction === 'continuous' || circuit.canStop,
+        margins: readMargins(loopGain, shape),
         loopGain,
         closedLoopPoles: () => {
           const { model: linear } = averagedPoint(circuit, guess)
@@ -71,6 +73,12 @@ export function evaluatorFor(base: DesignDocument, model: SpreadModel): Evaluato
       throw cause
     }
   }
+}
+
+/** From where the averaged search starts, which always passes through continuous conduction. */
+function continuousDuty(circuit: Circuit): number {
+  const orbit = findContinuousOrbit(circuit)
+  return orbit instanceof DesignError ? findOrbit(circuit).dutyCycle : orbit.dutyCycle
 }
 
 export function requireNetwork(design: DesignDocument): Network {

@@ -14,63 +14,97 @@ export interface LoopShape {
   readonly unstablePoles: number
 }
 
-const PER_DECADE = 12
-const LOWEST_SHARE = 1e-6 // of the switching frequency
+/** Where nothing but integrator and amplifier pole are, few points do. */
+const REGIONS = [
+  { from: 1e-6, to: 1e-4, perDecade: 4 }, // shares of the switching frequency
+  { from: 1e-4, to: 0.5, perDecade: 10 },
+] as const
 /** A step that turns the loop gain by more than 45° is halved, this often at most. */
 const LARGEST_TURN = Math.cos(Math.PI / 4)
 const MOST_HALVINGS = 6
 /** Relative width, in log ω, at which a crossing is found well enough. */
 const CLOSE = 1e-9
 
-/** rad/s, ascending up to half the switching frequency (Hz). */
-export function marginGrid(switchingFrequency: number): Float64Array {
-  const lowest = 2 * Math.PI * LOWEST_SHARE * switchingFrequency
-  const steps = Math.ceil(-Math.log10(2 * LOWEST_SHARE) * PER_DECADE)
-  const ratio = (2 * LOWEST_SHARE) ** (-1 / steps)
-  return Float64Array.from({ length: steps + 1 }, (_, i) =>
-    i === steps ? Math.PI * switchingFrequency : lowest * ratio ** i,
-  )
-}
-
+/** Samples of one loop, in buffers that are used again for the next. */
 interface Walk {
-  readonly omega: number[]
-  readonly re: number[]
-  readonly im: number[]
+  length: number
+  omega: Float64Array
+  re: Float64Array
+  im: Float64Array
 }
 
-export function fastMargins(loopGain: LoopGain, grid: Float64Array, shape: LoopShape): MarginSummary {
-  const walk = walkLoop(loopGain, withLandmarks(grid, shape.landmarks))
-  const { omega, re, im } = walk
+/** @param switchingFrequency - Hz, of all loops that will be read. */
+export function marginReader(switchingFrequency: number): (loopGain: LoopGain, shape: LoopShape) => MarginSummary {
+  const grid = gridUpTo(switchingFrequency)
+  const walk: Walk = { length: 0, ...buffers(16 * grid.length) }
+  const merged = new Float64Array(grid.length + MOST_LANDMARKS * AROUND.length)
+  return function read(loopGain, { landmarks, unstablePoles }) {
+    walkLoop(loopGain, withLandmarks(grid, landmarks, merged), walk)
+    const { phaseMargins, crossover } = gainCrossings(loopGain, walk)
+    const { gainMargin, encirclements } = phaseCrossings(loopGain, walk)
+    // A loop gain that is negative at standstill passes the axis there too, once for both halves.
+    const passage = loopGain(0).re < -1 ? (walk.im[0]! < 0 ? -1 : 1) : 0
+    // Gain left at half the switching frequency meets its own sampled image there.
+    const isStable = square(walk, walk.length - 1) < 1 && unstablePoles + 2 * encirclements + passage === 0
+    return {
+      crossover,
+      phaseMargin:
+        phaseMargins.length === 0 ? null : Math.min(...(isStable ? phaseMargins.map(Math.abs) : phaseMargins)),
+      gainMargin,
+      modulusMargin: closestApproach(loopGain, walk),
+      isStable,
+    }
+  }
+}
+
+/** rad/s, ascending up to half the switching frequency. */
+function gridUpTo(switchingFrequency: number): Float64Array {
+  const scale = 2 * Math.PI * switchingFrequency
+  const points = REGIONS.flatMap(({ from, to, perDecade }) => {
+    const steps = Math.ceil(Math.log10(to / from) * perDecade)
+    return Array.from({ length: steps }, (_, i) => scale * from * (to / from) ** (i / steps))
+  })
+  return Float64Array.from([...points, scale / 2])
+}
+
+const buffers = (capacity: number): Omit<Walk, 'length'> => ({
+  omega: new Float64Array(capacity),
+  re: new Float64Array(capacity),
+  im: new Float64Array(capacity),
+})
+
+const square = ({ re, im }: Walk, i: number): number => re[i]! * re[i]! + im[i]! * im[i]!
+
+function gainCrossings(loopGain: LoopGain, walk: Walk): { phaseMargins: number[]; crossover: number | null } {
   const phaseMargins: number[] = []
   let crossover: number | null = null
+  let above = square(walk, 0) > 1
+  for (let i = 1; i < walk.length; i++) {
+    const wasAbove = above
+    above = square(walk, i) > 1
+    if (above === wasAbove) continue
+    const at = rootBetween(walk.omega[i - 1]!, walk.omega[i]!, (w) => logSquare(loopGain(w)))
+    crossover = at / (2 * Math.PI)
+    phaseMargins.push(wrap(180 + argumentDeg(loopGain(at))))
+  }
+  return { phaseMargins, crossover }
+}
+
+function phaseCrossings(
+  loopGain: LoopGain,
+  { length, omega, re, im }: Walk,
+): { gainMargin: number | null; encirclements: number } {
   let gainMargin: number | null = null
   let encirclements = 0
-  const square = (i: number) => re[i]! * re[i]! + im[i]! * im[i]!
-  for (let i = 1; i < omega.length; i++) {
-    if (square(i - 1) > 1 !== square(i) > 1) {
-      const at = rootBetween(omega[i - 1]!, omega[i]!, (w) => logSquare(loopGain(w)))
-      crossover = at / (2 * Math.PI)
-      phaseMargins.push(wrap(180 + argumentDeg(loopGain(at))))
-    }
-    if (im[i - 1]! < 0 !== im[i]! < 0 && (re[i - 1]! < 0 || re[i]! < 0)) {
-      const { re: real } = loopGain(rootBetween(omega[i - 1]!, omega[i]!, (w) => loopGain(w).im))
-      // Each passage left of −1 is half an encirclement there, and half at the negative frequencies.
-      if (real < -1) encirclements += im[i]! < 0 ? -1 : 1
-      else if (real < 0) gainMargin = Math.min(gainMargin ?? Infinity, -20 * Math.log10(-real))
-    }
+  for (let i = 1; i < length; i++) {
+    const downwards = im[i]! < 0
+    if (im[i - 1]! < 0 === downwards || !(re[i - 1]! < 0 || re[i]! < 0)) continue
+    const { re: real } = loopGain(rootBetween(omega[i - 1]!, omega[i]!, (w) => loopGain(w).im))
+    // Each passage left of −1 is half an encirclement there, and half at the negative frequencies.
+    if (real < -1) encirclements += downwards ? -1 : 1
+    else if (real < 0) gainMargin = Math.min(gainMargin ?? Infinity, -20 * Math.log10(-real))
   }
-  // A loop gain that is negative at standstill passes the axis there too, once for both halves.
-  const passage = loopGain(0).re < -1 ? (im[0]! < 0 ? -1 : 1) : 0
-  const encircled = 2 * encirclements + passage
-  // Gain left at half the switching frequency meets its own sampled image there.
-  const isStable = square(omega.length - 1) < 1 && shape.unstablePoles + encircled === 0
-  return {
-    crossover,
-    phaseMargin: phaseMargins.length === 0 ? null : Math.min(...(isStable ? phaseMargins.map(Math.abs) : phaseMargins)),
-    gainMargin,
-    modulusMargin: closestApproach(loopGain, walk),
-    isStable,
-  }
+  return { gainMargin, encirclements }
 }
 
 const wrap = (degrees: number): number => degrees - 360 * Math.ceil((degrees - 180) / 360)
@@ -81,65 +115,105 @@ function rootBetween(low: number, high: number, f: (omega: number) => number): n
 }
 
 /** The same places about a landmark as the exact reading takes. */
-const AROUND = [0.97, 0.985, 0.993, 0.997, 1, 1.003, 1.007, 1.015, 1.03]
+const AROUND: readonly number[] = [0.97, 0.985, 0.993, 0.997, 1, 1.003, 1.007, 1.015, 1.03]
 
-function withLandmarks(grid: Float64Array, landmarks: readonly number[]): Float64Array {
+/** A power stage has fewer states than would make so many lightly damped pairs. */
+const MOST_LANDMARKS = 16
+
+/** The grid with its landmarks, written into `merged`. */
+function withLandmarks(grid: Float64Array, landmarks: readonly number[], merged: Float64Array): Float64Array {
   if (landmarks.length === 0) return grid
-  const extra = landmarks
-    .flatMap((landmark) => AROUND.map((share) => 2 * Math.PI * landmark * share))
-    .filter((omega) => omega > grid[0]! && omega < grid[grid.length - 1]!)
-  return Float64Array.from([...grid, ...extra]).sort()
+  const last = grid[grid.length - 1]!
+  const extra: number[] = []
+  for (const landmark of landmarks.slice(0, MOST_LANDMARKS)) {
+    for (const share of AROUND) {
+      const omega = 2 * Math.PI * landmark * share
+      if (omega > grid[0]! && omega < last) extra.push(omega)
+    }
+  }
+  extra.sort((a, b) => a - b)
+  let taken = 0
+  for (let i = 0, k = 0; i < grid.length + extra.length; i++) {
+    const isExtra = k < extra.length && extra[k]! < grid[taken]!
+    merged[i] = isExtra ? extra[k++]! : grid[taken++]!
+  }
+  return merged.subarray(0, grid.length + extra.length)
 }
 
-function walkLoop(loopGain: LoopGain, grid: Float64Array): Walk {
-  const walk: Walk = { omega: [], re: [], im: [] }
-  const keep = (omega: number, { re, im }: Complex) => {
-    walk.omega.push(omega)
-    walk.re.push(re)
-    walk.im.push(im)
-  }
-  const step = (from: number, a: Complex, to: number, b: Complex, halvings: number): void => {
-    const turn = a.re * b.re + a.im * b.im
-    const sizes = Math.sqrt((a.re * a.re + a.im * a.im) * (b.re * b.re + b.im * b.im))
-    if (turn < LARGEST_TURN * sizes && halvings > 0) {
-      const middle = Math.sqrt(from * to)
-      const gain = loopGain(middle)
-      step(from, a, middle, gain, halvings - 1)
-      step(middle, gain, to, b, halvings - 1)
-    } else keep(to, b)
-  }
+function walkLoop(loopGain: LoopGain, grid: Float64Array, walk: Walk): void {
+  walk.length = 0
   let before = loopGain(grid[0]!)
-  keep(grid[0]!, before)
+  keep(walk, grid[0]!, before)
   for (let i = 1; i < grid.length; i++) {
     const here = loopGain(grid[i]!)
-    step(grid[i - 1]!, before, grid[i]!, here, MOST_HALVINGS)
+    stepTo(loopGain, walk, grid[i - 1]!, before, grid[i]!, here, MOST_HALVINGS)
     before = here
   }
-  return walk
+}
+
+function stepTo(
+  loopGain: LoopGain,
+  walk: Walk,
+  from: number,
+  a: Complex,
+  to: number,
+  b: Complex,
+  halvings: number,
+): void {
+  const turn = a.re * b.re + a.im * b.im
+  const sizes = Math.sqrt((a.re * a.re + a.im * a.im) * (b.re * b.re + b.im * b.im))
+  if (halvings === 0 || turn >= LARGEST_TURN * sizes) {
+    keep(walk, to, b)
+    return
+  }
+  const middle = Math.sqrt(from * to)
+  const gain = loopGain(middle)
+  stepTo(loopGain, walk, from, a, middle, gain, halvings - 1)
+  stepTo(loopGain, walk, middle, gain, to, b, halvings - 1)
+}
+
+function keep(walk: Walk, omega: number, { re, im }: Complex): void {
+  if (walk.length === walk.omega.length) grow(walk)
+  walk.omega[walk.length] = omega
+  walk.re[walk.length] = re
+  walk.im[walk.length] = im
+  walk.length++
+}
+
+function grow(walk: Walk): void {
+  const larger = buffers(2 * walk.length)
+  for (const key of ['omega', 're', 'im'] as const) {
+    larger[key].set(walk[key])
+    walk[key] = larger[key]
+  }
 }
 
 /** Least |1 + T|: golden sections about every dip of the samples that could be the lowest. */
-function closestApproach(loopGain: LoopGain, { omega, re, im }: Walk): number {
-  const last = omega.length - 1
-  const sampled = omega.map((_, i) => Math.hypot(1 + re[i]!, im[i]!))
-  const least = Math.min(...sampled)
+function closestApproach(loopGain: LoopGain, { length, omega, re, im }: Walk): number {
+  const squareAt = (i: number) => (1 + re[i]!) * (1 + re[i]!) + im[i]! * im[i]!
+  let least = Infinity
+  for (let i = 0; i < length; i++) least = Math.min(least, squareAt(i))
   let best = least
-  for (let i = 0; i <= last; i++) {
+  for (let i = 0; i < length; i++) {
+    const here = squareAt(i)
+    if (here > CANDIDATE * least) continue
     const low = Math.max(0, i - 1)
-    const high = Math.min(last, i + 1)
-    if (sampled[i]! > sampled[low]! || sampled[i]! > sampled[high]! || sampled[i]! > 1.3 * least) continue
-    best = Math.min(best, leastBetween(loopGain, Math.log(omega[low]!), Math.log(omega[high]!)))
+    const high = Math.min(length - 1, i + 1)
+    if (here > squareAt(low) || here > squareAt(high)) continue
+    best = Math.min(best, leastSquareBetween(loopGain, Math.log(omega[low]!), Math.log(omega[high]!)))
   }
-  return best
+  return Math.sqrt(best)
 }
 
+/** |1 + T|² of a sampled dip, over the least one, up to which the true least may lie in it. */
+const CANDIDATE = 1.7
 const GOLDEN = (Math.sqrt(5) - 1) / 2
 const SECTIONS = 14
 
-function leastBetween(loopGain: LoopGain, from: number, to: number): number {
+function leastSquareBetween(loopGain: LoopGain, from: number, to: number): number {
   const distance = (logOmega: number) => {
     const { re, im } = loopGain(Math.exp(logOmega))
-    return Math.hypot(1 + re, im)
+    return (1 + re) * (1 + re) + im * im
   }
   let low = from
   let high = to

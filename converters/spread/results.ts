@@ -48,8 +48,8 @@ export interface ToleranceCorner extends PlacedMargins {
 
 export interface CornerQuantity extends VariedQuantity {
   /**
-   * How far the slack moves from one end to the other with everything else at nominal, line and load at the corner that
-   * is worst before tolerances.
+   * How far the margins move from one end to the other, each as a share of its target, summed; with everything else at
+   * nominal, and line and load where they are worst before tolerances. Zero for line and load themselves.
    */
   readonly influence: number
   /** False where the corners leave it at nominal, for the sake of their number. */

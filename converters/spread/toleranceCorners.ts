@@ -1,11 +1,12 @@
 /** The loop at every combination of line, load and tolerance ends. */
 import type { DesignDocument } from '../document'
+import type { MarginSummary } from '../results'
 import { evaluatorFor, type Evaluation, type Refusal } from './evaluation'
 import { mergeFailures, withFailure } from './failures'
 import { appliedTargets, slackOf } from './judging'
 import type { ToleranceCornerOptions } from './options'
 import type { AppliedTargets, SpreadFailure, ToleranceCorner, ToleranceCornerSet } from './results'
-import { conditioned, sampleAt, variablesOf, type Variable } from './variation'
+import { conditioned, sampleAt, samplerOf, variablesOf, type Variable } from './variation'
 
 interface RankedVariable {
   readonly variable: Variable
@@ -31,12 +32,13 @@ export function toleranceCorners(document: DesignDocument, options: ToleranceCor
   )
   const combined = Math.max(0, Math.min(ranked.length, Math.floor(Math.log2(options.mostCorners)) - range.length))
   const order = [...range, ...ranked.map(({ variable }) => variable)]
+  const sample = samplerOf(design, order)
   const judged = valueSets(order, range.length + combined).map((values) => {
-    const sample = sampleAt(design, order, values)
-    return { values, sample, found: evaluate(sample) }
+    const { design: varied, point } = sample(values)
+    return { values, point: { ...point }, found: evaluate({ design: varied, point }) }
   })
-  const corners = judged.flatMap(({ values, sample, found }) =>
-    'refused' in found ? [] : [{ ...sample.point, ...cornerOf(found, targets), values }],
+  const corners = judged.flatMap(({ values, point, found }) =>
+    'refused' in found ? [] : [{ ...point, ...cornerOf(found, targets), values }],
   )
   return {
     model: options.model,
@@ -71,7 +73,7 @@ function failuresOf(judged: readonly { readonly values: readonly number[]; reado
 
 /**
  * Each tolerance alone at both ends, by the averaged model, where line and load are worst before tolerances: how far the
- * slack moves between the ends. A loop lost at an end has moved farthest.
+ * margins move between the ends, each as a share of its target. A loop that is lost at one end has moved farthest.
  */
 function rankByInfluence(
   design: DesignDocument,
@@ -80,23 +82,36 @@ function rankByInfluence(
   targets: AppliedTargets,
 ): RankedVariable[] {
   const evaluate = evaluatorFor(design, 'averaged')
-  const slackAt = (variables: readonly Variable[], values: readonly number[]): number => {
+  const marginsAt = (variables: readonly Variable[], values: readonly number[]): MarginSummary | null => {
     const found = evaluate(sampleAt(design, variables, values))
-    return 'refused' in found ? LOST : slackOf(found.margins, targets)
+    return 'refused' in found ? null : found.margins
+  }
+  const slackAt = (values: readonly number[]): number => {
+    const margins = marginsAt(range, values)
+    return margins ? slackOf(margins, targets) : Infinity
   }
   const worst = valueSets(range, range.length).reduce((least, values) =>
-    slackAt(range, values) < slackAt(range, least) ? values : least,
+    slackAt(values) < slackAt(least) ? values : least,
   )
   return tolerances
     .map((variable) => {
-      const ends = [variable.low, variable.high].map((value) => slackAt([...range, variable], [...worst, value]))
-      return { variable, influence: Math.abs(ends[1]! - ends[0]!) }
+      const low = marginsAt([...range, variable], [...worst, variable.low])
+      const high = marginsAt([...range, variable], [...worst, variable.high])
+      return { variable, influence: low && high ? distanceBetween(low, high, targets) : LOST }
     })
     .sort((a, b) => b.influence - a.influence)
 }
 
-/** Slack of a point that cannot be reached at all. */
-const LOST = -3
+/** Influence of a tolerance at one end of which there is no operating point. */
+const LOST = 100
+
+function distanceBetween(low: MarginSummary, high: MarginSummary, targets: AppliedTargets): number {
+  const moved = (key: keyof AppliedTargets, least: number) => {
+    const [before, after] = [low[key], high[key]]
+    return before === null || after === null ? 0 : Math.abs(after - before) / Math.max(targets[key], least)
+  }
+  return moved('phaseMargin', 1) + moved('gainMargin', 1) + moved('modulusMargin', 0.01)
+}
 
 /** Nominal values, then every combination of ends of the first `combined` variables with the others at nominal. */
 function valueSets(variables: readonly Variable[], combined: number): number[][] {

@@ -51,17 +51,29 @@ export function conditioned(design: DesignDocument, { temperature, ageing }: Spr
 
 /** The design and point at which the variables have these values, in their order. */
 export function sampleAt(base: DesignDocument, variables: readonly Variable[], values: ArrayLike<number>): Sample {
+  return samplerOf(base, variables)(values)
+}
+
+/**
+ * The same for thousands of value sets in turn: they are written into one copy, so that a sample holds until the next one
+ * is asked for.
+ */
+export function samplerOf(base: DesignDocument, variables: readonly Variable[]): (values: ArrayLike<number>) => Sample {
   const draft = draftOf(base)
-  const upperBefore = upperOf(draft.design)
-  const lowerBefore = draft.lowerResistance
-  variables.forEach((variable, i) => variable.set(draft, values[i]!))
-  const { design, lineVoltage, outputCurrent, lowerResistance } = draft
-  const upper = upperOf(design)
-  // The loop holds the reference at the divider's tap, so the output goes where the divider puts it.
-  if (Number.isFinite(lowerResistance) && (upper !== upperBefore || lowerResistance !== lowerBefore)) {
-    design.output.voltage = design.sense.referenceVoltage * (1 + upper / lowerResistance)
+  const { design } = draft
+  const { voltage } = design.output
+  const ratio = draft.lowerResistance / upperOf(design)
+  const point = { lineVoltage: draft.lineVoltage, outputCurrent: draft.outputCurrent }
+  return (values) => {
+    for (let i = 0; i < variables.length; i++) variables[i]!.set(draft, values[i]!)
+    point.lineVoltage = draft.lineVoltage
+    point.outputCurrent = draft.outputCurrent
+    // The loop holds the reference at the divider's tap, so the output goes where the divider puts it.
+    const varied = draft.lowerResistance / upperOf(design)
+    const isDivided = Number.isFinite(varied) && varied !== ratio
+    design.output.voltage = isDivided ? design.sense.referenceVoltage * (1 + 1 / varied) : voltage
+    return { design, point }
   }
-  return { design, point: { lineVoltage, outputCurrent } }
 }
 
 /** How a coordinate in (0, 1) becomes a value. Line and load are uniform over their ranges: any of it may be met. */
@@ -207,52 +219,63 @@ function stageParts(design: DesignDocument): Variable[] {
 }
 
 function controlParts(design: DesignDocument): Variable[] {
-  const { modulator, amplifier } = design
-  const ofModulator = (key: string, label: string, unit: VariedQuantity['unit'], nominal: number): Variable[] =>
-    tolerated(design, 'modulator', `modulator.${key}`, label, unit, nominal, (draft, value) => {
-      Object.assign(draft.design.modulator, { [key]: value })
+  return [...modulatorParts(design), ...amplifierParts(design)]
+}
+
+function modulatorParts(design: DesignDocument): Variable[] {
+  const { modulator } = design
+  const of = tolerated.bind(null, design, 'modulator')
+  if (modulator.kind === 'voltage-mode') {
+    return of('modulator.rampAmplitude', 'Ramp amplitude', 'V', modulator.rampAmplitude, (draft, value) => {
+      if (draft.design.modulator.kind === 'voltage-mode') draft.design.modulator.rampAmplitude = value
     })
-  const ofAmplifier = (
-    group: 'amplifier' | 'resistor',
-    key: string,
-    label: string,
-    unit: VariedQuantity['unit'],
-    nominal: number,
-  ): Variable[] =>
-    tolerated(design, group, `amplifier.${key}`, label, unit, nominal, (draft, value) => {
-      Object.assign(draft.design.amplifier, { [key]: value })
-    })
-  const ofControl =
-    modulator.kind === 'voltage-mode'
-      ? ofModulator('rampAmplitude', 'Ramp amplitude', 'V', modulator.rampAmplitude)
-      : [
-          ...ofModulator('currentSenseResistance', 'Current-sense gain', 'Ω', modulator.currentSenseResistance),
-          ...ofModulator('slopeCompensation', 'Slope compensation', 'V/s', modulator.slopeCompensation),
-        ]
+  }
+  const { currentSenseResistance, slopeCompensation } = modulator
+  return [
+    ...of('modulator.currentSenseResistance', 'Current-sense gain', 'Ω', currentSenseResistance, (draft, value) => {
+      const varied = draft.design.modulator
+      if (varied.kind === 'peak-current-mode') varied.currentSenseResistance = value
+    }),
+    ...of('modulator.slopeCompensation', 'Slope compensation', 'V/s', slopeCompensation, (draft, value) => {
+      const varied = draft.design.modulator
+      if (varied.kind === 'peak-current-mode') varied.slopeCompensation = value
+    }),
+  ]
+}
+
+function amplifierParts(design: DesignDocument): Variable[] {
+  const { amplifier } = design
+  const of = tolerated.bind(null, design, 'amplifier')
   switch (amplifier.kind) {
     case 'op-amp':
-      return [
-        ...ofControl,
-        ...ofAmplifier('amplifier', 'gainBandwidth', 'Gain-bandwidth', 'Hz', amplifier.gainBandwidth),
-      ]
+      return of('amplifier.gainBandwidth', 'Gain-bandwidth', 'Hz', amplifier.gainBandwidth, (draft, value) => {
+        if (draft.design.amplifier.kind === 'op-amp') draft.design.amplifier.gainBandwidth = value
+      })
     case 'transconductance':
+      return of('amplifier.transconductance', 'Transconductance', 'S', amplifier.transconductance, (draft, value) => {
+        if (draft.design.amplifier.kind === 'transconductance') draft.design.amplifier.transconductance = value
+      })
+    case 'shunt-optocoupler': {
+      const { currentTransferRatio, pullUpResistance, ledResistance } = amplifier
+      const into =
+        (key: 'currentTransferRatio' | 'pullUpResistance' | 'ledResistance'): Variable['set'] =>
+        (draft, value) => {
+          if (draft.design.amplifier.kind === 'shunt-optocoupler') draft.design.amplifier[key] = value
+        }
+      const ofResistor = tolerated.bind(null, design, 'resistor')
+      const ratio = into('currentTransferRatio')
       return [
-        ...ofControl,
-        ...ofAmplifier('amplifier', 'transconductance', 'Transconductance', 'S', amplifier.transconductance),
-      ]
-    case 'shunt-optocoupler':
-      return [
-        ...ofControl,
-        ...ofAmplifier(
-          'amplifier',
-          'currentTransferRatio',
-          'Current transfer ratio',
-          '',
-          amplifier.currentTransferRatio,
+        ...of('amplifier.currentTransferRatio', 'Current transfer ratio', '', currentTransferRatio, ratio),
+        ...ofResistor(
+          'amplifier.pullUpResistance',
+          'Pull-up resistor',
+          'Ω',
+          pullUpResistance,
+          into('pullUpResistance'),
         ),
-        ...ofAmplifier('resistor', 'pullUpResistance', 'Pull-up resistor', 'Ω', amplifier.pullUpResistance),
-        ...ofAmplifier('resistor', 'ledResistance', 'LED resistor', 'Ω', amplifier.ledResistance),
+        ...ofResistor('amplifier.ledResistance', 'LED resistor', 'Ω', ledResistance, into('ledResistance')),
       ]
+    }
   }
 }
 

@@ -1,0 +1,15 @@
+/** One worker's part of a statistical run, in a process of its own: what it takes in time and memory, as JSON. */
+import { startRun } from '@/converters'
+import { benchDesign } from '@/scripts/bench/subject'
+
+const [model, samples, index, of] = process.argv.slice(2)
+const start = performance.now()
+const run = startRun(benchDesign, { model, samples: Number(samples) }, { index: Number(index), of: Number(of) })
+while (run.next(500));
+run.snapshot()
+console.log(
+  JSON.stringify({
+    wall: performance.now() - start,
+    memory: process.resourceUsage().maxRSS / 1024,
+  }),
+)
