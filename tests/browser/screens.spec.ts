@@ -1,6 +1,7 @@
 import { expect, expectAccessible, expectNoSidewaysScrolling, figureOf, goTo, openSample, test } from './fixtures'
 
 test('first page and start: accessible, nothing scrolls sideways', async ({ page }) => {
+  test.slow() // the check of access itself takes seconds on a busy machine
   await page.goto('/')
   await expect(page.getByRole('button', { name: /^Open the sample/ }).first()).toBeVisible()
   await expectAccessible(page)
@@ -15,6 +16,7 @@ test('first page and start: accessible, nothing scrolls sideways', async ({ page
 })
 
 test('Stage with a part open: accessible, nothing scrolls sideways', async ({ page }) => {
+  test.slow() // the check of access itself takes seconds on a busy machine
   await openSample(page, 'Sensor boost, 5 V to 24 V')
   await expect(figureOf(page, 'Duty cycle')).toBeVisible()
   await expectAccessible(page)
@@ -25,6 +27,7 @@ test('Stage with a part open: accessible, nothing scrolls sideways', async ({ pa
 })
 
 test('Plant, drawn and as a table: accessible, nothing scrolls sideways', async ({ page }) => {
+  test.slow() // the check of access itself takes seconds on a busy machine
   await openSample(page, 'Sensor boost, 5 V to 24 V')
   await goTo(page, 'Plant')
   await expect(page.getByRole('heading', { name: 'Closed forms' })).toBeVisible()
@@ -37,6 +40,7 @@ test('Plant, drawn and as a table: accessible, nothing scrolls sideways', async 
 })
 
 test('Loop with a network: accessible, nothing scrolls sideways', async ({ page }) => {
+  test.slow() // the check of access itself takes seconds on a busy machine
   await openSample(page, 'Sensor boost, 5 V to 24 V')
   await goTo(page, 'Loop')
   await page.getByRole('button', { name: 'Propose parts' }).click()
