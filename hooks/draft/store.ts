@@ -84,7 +84,10 @@ export const draftStore = {
 
   /** Another crossover is wanted, in Hz. A network that was proposed follows; one set by hand stays. */
   wantCrossover(crossover: number): void {
-    change((draft) => ({
+    // The wish and the network that follows from it are one step back, however far the handle was drawn.
+    const isFirst = current.kind === 'draft' && current.draft.isAsProposed && !current.draft.awaitsProposal
+    const update = isFirst ? changeWithUndo : change
+    update((draft) => ({
       ...draft,
       design: { ...draft.design, targets: { ...draft.design.targets, crossover } },
       texts: without(draft.texts, (path) => path === 'targets.crossover'),
@@ -94,7 +97,9 @@ export const draftStore = {
 
   /** Takes a proposed network over. */
   takeNetwork(compensator: NonNullable<DesignDocument['compensator']>): void {
-    changeWithUndo((draft) => ({
+    const isFollowing = current.kind === 'draft' && current.draft.awaitsProposal
+    const update = isFollowing ? change : changeWithUndo
+    update((draft) => ({
       ...draft,
       design: { ...draft.design, compensator },
       texts: without(draft.texts, (path) => path.startsWith('compensator.')),

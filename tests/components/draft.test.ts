@@ -3,6 +3,7 @@ import { describe, expect, it } from 'vitest'
 import { DesignDocument } from '@/converters/document'
 import { formatEntry, settle, shownEntry } from '@/hooks/draft/entries'
 import { readDraft } from '@/hooks/draft/schema'
+import { draftStore } from '@/hooks/draft/store'
 import { parseQuantity } from '@/converters/quantities'
 
 const design = DesignDocument.parse({
@@ -58,6 +59,37 @@ describe('typing into a design', () => {
         for (const path of Object.keys(settled.texts)) expect(settled.texts[path]).toBe(texts[path])
       }),
     )
+  })
+})
+
+describe('asking for another crossover', () => {
+  const first = { type: 'III' as const, parts: { R1: 10e3, R2: 7.5e3, C1: 2.7e-9 } }
+  const second = { type: 'III' as const, parts: { R1: 10e3, R2: 3.3e3, C1: 6.8e-9 } }
+  const draft = () => {
+    const stored = draftStore.read()
+    if (stored.kind !== 'draft') throw new Error('no draft')
+    return stored.draft
+  }
+
+  it('is one step back, together with the network that followed, however far the handle was drawn', () => {
+    draftStore.open(design)
+    draftStore.takeNetwork(first)
+    for (const wish of [50e3, 45e3, 40e3]) draftStore.wantCrossover(wish)
+    expect(draft()).toMatchObject({ awaitsProposal: true, design: { targets: { crossover: 40e3 } } })
+    draftStore.takeNetwork(second)
+    draftStore.undo()
+    expect(draft()).toMatchObject({
+      awaitsProposal: false,
+      design: { targets: { crossover: null }, compensator: first },
+    })
+  })
+  it('leaves a network alone whose parts were set by hand', () => {
+    draftStore.open(design)
+    draftStore.takeNetwork(first)
+    draftStore.type('compensator.parts.R2', '8k2')
+    draftStore.wantCrossover(40e3)
+    expect(draft().awaitsProposal).toBe(false)
+    expect(draft().design.compensator?.parts.R2).toBe(8.2e3)
   })
 })
 
