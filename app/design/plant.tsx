@@ -76,7 +76,7 @@ export default function PlantScreen() {
                 </Text>
               </Card>
               <View style={styles.next}>
-                <LinkButton kind="primary" icon="arrow" label="Close the loop" href="/design/loop" />
+                <LinkButton kind="primary" icon="arrow" label="To the loop" href="/design/loop" />
               </View>
               <Caution />
             </>
