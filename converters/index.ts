@@ -34,8 +34,11 @@ export function simulate(design: unknown, options: SimulationOptionsInput = {}):
   return simulateLoop(document, checked.data)
 }
 
+export { analyseToleranceCorners, mergeSummaries, presentSummary, runSpread, startRun } from './spread'
 export { ENGINE_VERSION } from './version'
 export { DesignError, type DesignErrorCode, type FieldProblem } from './errors'
 export * from './document'
 export type * from './results'
+export type { RunPart, SpreadRun, SpreadSummary } from './spread'
+export type * from './spread/results'
 export type { AnalysisOptions, CornerOptions }

@@ -64,7 +64,7 @@ const moved = (x: ArrayLike<number>, j: number, offset: number): Float64Array =>
 }
 
 /** Time derivatives and output, averaged over a period with switch duty d₁. */
-export function averages(circuit: Circuit, x: ArrayLike<number>, inputs: readonly number[], duty: number): Averages {
+function averages(circuit: Circuit, x: ArrayLike<number>, inputs: readonly number[], duty: number): Averages {
   const { on, off, idle, period, stoppingState } = circuit
   const mean = x[stoppingState]!
   const rise = risingSlope(circuit, x, inputs)
