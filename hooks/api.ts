@@ -84,4 +84,5 @@ export const api = {
   get: <T extends z.ZodType>(path: string, schema: T, signal?: AbortSignal) => call('GET', path, schema, { signal }),
   post: <T extends z.ZodType>(path: string, body: unknown, schema: T, signal?: AbortSignal) =>
     call('POST', path, schema, { body, signal }),
+  delete: <T extends z.ZodType>(path: string, schema: T) => call('DELETE', path, schema, {}),
 }

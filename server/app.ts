@@ -19,12 +19,15 @@ import { computeRoutes } from '@/server/routes/compute'
 import { healthRoutes } from '@/server/routes/health'
 import { openApiRoutes } from '@/server/routes/openapi'
 import { sampleRoutes } from '@/server/routes/samples'
+import { spreadRunRoutes } from '@/server/routes/spreadRuns'
+import type { SpreadRunner } from '@/server/services/spreadRuns/runner'
 
 export interface AppDependencies {
   readonly db: Database
   readonly compute: ComputePool
+  readonly spreadRunner: SpreadRunner
   readonly logger: Logger
-  readonly env: Pick<Env, 'RATE_LIMIT_PER_MINUTE' | 'TRUSTED_PROXIES'>
+  readonly env: Pick<Env, 'RATE_LIMIT_PER_MINUTE' | 'TRUSTED_PROXIES' | 'SPREAD_SAMPLES_MAX'>
   /** Folder of the web build. */
   readonly webRoot: string
 }
@@ -32,7 +35,7 @@ export interface AppDependencies {
 /** The quickest levels: on answers of some 300 kB the next ones win a tenth of the bytes for several times the work. */
 const COMPRESSION = { level: 1, brotli: { params: { [constants.BROTLI_PARAM_QUALITY]: 1 } } }
 
-export function createApp({ db, compute, logger, env, webRoot }: AppDependencies): Express {
+export function createApp({ db, compute, spreadRunner, logger, env, webRoot }: AppDependencies): Express {
   const app = express()
   app.disable('x-powered-by')
   // Answers of the API are never asked for twice with the same tag; hashing each would be work for nothing.
@@ -45,7 +48,8 @@ export function createApp({ db, compute, logger, env, webRoot }: AppDependencies
     res.setHeader('Cache-Control', 'no-store')
     next()
   })
-  api.use(jsonBody, openApiRoutes(), sampleRoutes(db), computeRoutes(compute), notFound)
+  api.use(jsonBody, openApiRoutes(), sampleRoutes(db), computeRoutes(compute))
+  api.use(spreadRunRoutes({ db, compute, runner: spreadRunner, samplesMax: env.SPREAD_SAMPLES_MAX }), notFound)
   app.use(API_ROOT, api)
   app.use('/api', notFound)
 

@@ -3,6 +3,8 @@ import { availableParallelism } from 'node:os'
 
 import { z } from 'zod'
 
+import { MOST_SAMPLES } from '@/converters/spread/options'
+
 const whole = (least: number, most: number) =>
   z.coerce
     .number({ error: 'must be a number' })
@@ -26,6 +28,8 @@ const Env = z.object({
   COMPUTE_THREADS: whole(1, 64).default(Math.min(64, availableParallelism())),
   COMPUTE_QUEUE: whole(0, 10_000).default(200),
   COMPUTE_TIMEOUT_MS: whole(10, 600_000).default(10_000),
+  SPREAD_SAMPLES_MAX: whole(100, MOST_SAMPLES).default(10_000),
+  SPREAD_TIMEOUT_MS: whole(10, 3_600_000).default(300_000),
   RATE_LIMIT_PER_MINUTE: whole(1, 1_000_000).default(1_200),
   TRUSTED_PROXIES: whole(0, 10).default(0),
   SHUTDOWN_GRACE_MS: whole(0, 120_000).default(10_000),

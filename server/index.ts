@@ -8,6 +8,9 @@ import { createApp } from '@/server/app'
 import { createComputePool } from '@/server/compute/pool'
 import { type Env, EnvError, readEnv } from '@/server/env'
 import { createLogger } from '@/server/logger'
+import { SHARED_LIMITS } from '@/server/services/spreadRuns/limits'
+import { createSpreadRunner } from '@/server/services/spreadRuns/runner'
+import { startSweeping } from '@/server/services/spreadRuns/sweep'
 import { closeOnSignal } from '@/server/shutdown'
 
 // Holds from the sources (server/) and from the bundle (build/): both lie one step below the root.
@@ -35,7 +38,10 @@ const compute = createComputePool({
   queue: env.COMPUTE_QUEUE,
   timeoutMs: env.COMPUTE_TIMEOUT_MS,
 })
-const server = createServer(createApp({ db: database.db, compute, logger, env, webRoot }))
+const { db } = database
+const limits = { ...SHARED_LIMITS, timeoutMs: env.SPREAD_TIMEOUT_MS }
+const spreadRunner = createSpreadRunner({ db, compute, logger, limits })
+const server = createServer(createApp({ db, compute, spreadRunner, logger, env, webRoot }))
 
 server.on('error', (error: NodeJS.ErrnoException) => {
   const isTaken = error.code === 'EADDRINUSE'
@@ -48,7 +54,8 @@ server.on('error', (error: NodeJS.ErrnoException) => {
 })
 
 await compute.warmUp()
-closeOnSignal({ server, compute, database, logger, graceMs: env.SHUTDOWN_GRACE_MS })
+const stopSweeping = await startSweeping({ db, runner: spreadRunner, logger })
+closeOnSignal({ server, compute, spreadRunner, stopSweeping, database, logger, graceMs: env.SHUTDOWN_GRACE_MS })
 server.listen(env.PORT, env.HOST)
 await once(server, 'listening')
 

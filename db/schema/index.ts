@@ -1,1 +1,2 @@
 export * from '@/db/schema/sampleDesigns'
+export * from '@/db/schema/spreadRuns'

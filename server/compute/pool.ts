@@ -3,7 +3,7 @@ import { fileURLToPath } from 'node:url'
 
 import { Piscina } from 'piscina'
 
-import type { TaskRequest, WorkerAnswer, WorkerMessage } from '@/server/compute/messages'
+import type { SpreadAnswer, SpreadWork, TaskRequest, WorkerAnswer, WorkerMessage } from '@/server/compute/messages'
 import { warmUpRequest } from '@/server/compute/warmUp'
 import { AppError } from '@/server/errors'
 
@@ -22,6 +22,14 @@ export interface ComputePool {
    * @throws AppError 'design-refused', 'busy', 'computation-stopped' or, while closing, 'not-ready'
    */
   readonly run: (request: TaskRequest, gone?: AbortSignal) => Promise<Uint8Array>
+  /**
+   * Does a piece of a statistical run. It waits its turn among the tasks, but is neither turned away nor timed: whoever
+   * runs the whole holds to few pieces at once and says when to stop.
+   * @param stop - Drops the piece while it waits, and ends its thread once it has begun.
+   * @throws AppError 'design-refused' or, while closing, 'not-ready'; AbortError when stopped
+   */
+  readonly runSpread: (work: SpreadWork, stop: AbortSignal) => Promise<Exclude<SpreadAnswer, { kind: 'refused' }>>
+  readonly threads: number
   /** Starts the threads and loads the engine in each. */
   readonly warmUp: () => Promise<void>
   readonly isAlive: () => boolean
@@ -38,7 +46,7 @@ const workerFile = fileURLToPath(new URL(isSource ? './worker.ts' : './worker.js
 export function createComputePool({ threads, queue, timeoutMs }: ComputePoolOptions): ComputePool {
   let isClosed = false
   let pending = 0
-  const piscina = new Piscina<WorkerMessage, WorkerAnswer>({
+  const piscina = new Piscina<WorkerMessage | SpreadWork, WorkerAnswer | SpreadAnswer>({
     filename: workerFile,
     execArgv: isSource ? ['--import', 'tsx'] : [],
     minThreads: threads,
@@ -59,9 +67,9 @@ export function createComputePool({ threads, queue, timeoutMs }: ComputePoolOpti
     else gone?.addEventListener('abort', abandon, { once: true })
     pending += 1
     try {
-      return jsonOf(await piscina.run({ request, started }, { signal: stop.signal }))
+      return jsonOf(accepted(await piscina.run({ request, started }, { signal: stop.signal })))
     } catch (error) {
-      if (isClosed) throw new AppError('not-ready', { detail: 'The server is being stopped.' })
+      if (isClosed) throw closing()
       if (!stop.signal.aborted) throw error
       throw new AppError('computation-stopped', {
         detail: `No answer within ${timeoutMs / 1000} s. Ask for fewer frequencies, or try again in a moment.`,
@@ -75,8 +83,18 @@ export function createComputePool({ threads, queue, timeoutMs }: ComputePoolOpti
     }
   }
 
+  async function runSpread(work: SpreadWork, stop: AbortSignal) {
+    try {
+      return accepted(await piscina.run(work, { name: 'spread', signal: stop }))
+    } catch (error) {
+      throw isClosed ? closing() : error
+    }
+  }
+
   return {
     run,
+    runSpread,
+    threads,
     warmUp: async () => {
       await Promise.all(Array.from({ length: threads }, () => run(warmUpRequest)))
     },
@@ -88,9 +106,20 @@ export function createComputePool({ threads, queue, timeoutMs }: ComputePoolOpti
   }
 }
 
-function jsonOf(answer: WorkerAnswer): Uint8Array {
+function accepted<Answer extends WorkerAnswer | SpreadAnswer>(answer: Answer): Exclude<Answer, { kind: 'refused' }> {
+  if (answer.kind === 'refused')
+    throw new AppError('design-refused', { detail: answer.message, errors: answer.problems })
+  return answer as Exclude<Answer, { kind: 'refused' }>
+}
+
+/** The JSON of an answer that has one; only the pieces of a statistical run have none. */
+export function jsonOf(answer: Exclude<SpreadAnswer, { kind: 'refused' }>): Uint8Array {
   if (answer.kind === 'answered') return answer.json
-  throw new AppError('design-refused', { detail: answer.message, errors: answer.problems })
+  throw new TypeError(`A worker answered with a ${answer.kind} in place of JSON.`)
+}
+
+function closing(): AppError {
+  return new AppError('not-ready', { detail: 'The server is being stopped.' })
 }
 
 function busy(): AppError {

@@ -4,7 +4,7 @@ import type { TaskName } from '@/server/compute/messages'
 const DESIGN_SECTIONS = new Set(Object.keys(DesignDocument.shape))
 
 /** Tasks whose request carries the engine's options apart from the design. */
-const HAS_OPTIONS: ReadonlySet<TaskName> = new Set(['compensators', 'simulation'])
+const HAS_OPTIONS: ReadonlySet<TaskName> = new Set(['compensators', 'simulation', 'toleranceCorners', 'spreadCheck'])
 
 /**
  * The engine names a field by its path in the design or in the options, `outputCapacitors[0].esr`; the API by its path in

@@ -1,12 +1,28 @@
-import { analyse, analyseCorners, proposeCompensator, proposeStage, simulate } from '@/converters'
+import { analyse, analyseCorners, analyseRootLocus, proposeCompensator, proposeStage, simulate } from '@/converters'
+import { analyseToleranceCorners, startRun } from '@/converters/spread'
 import type { TaskRequest } from '@/server/compute/messages'
 import type { Analysis } from '@/server/contract/analyses'
 import type { CompensatorProposals } from '@/server/contract/compensators'
 import type { CornerSet } from '@/server/contract/corners'
+import type { RootLocus } from '@/server/contract/rootLoci'
 import type { Simulation } from '@/server/contract/simulations'
 import type { StageProposal } from '@/server/contract/stageProposals'
+import type { ToleranceCornerSet } from '@/server/contract/toleranceCorners'
 
-type Answer = Analysis | CornerSet | CompensatorProposals | Simulation | StageProposal
+/** Answer to `spreadCheck`, for the server alone. */
+export interface SpreadCheck {
+  readonly evaluations: number
+}
+
+type Answer =
+  | Analysis
+  | CornerSet
+  | CompensatorProposals
+  | RootLocus
+  | Simulation
+  | StageProposal
+  | ToleranceCornerSet
+  | SpreadCheck
 
 /** Runs one task on the engine. The return type holds the engine to the contract. @throws DesignError */
 export function compute(request: TaskRequest): Answer {
@@ -23,11 +39,23 @@ export function compute(request: TaskRequest): Answer {
       const { design, options } = request.input
       return proposeCompensator(design, options) satisfies CompensatorProposals
     }
+    case 'rootLocus': {
+      const { design, operatingPoint } = request.input
+      return analyseRootLocus(design, operatingPoint) satisfies RootLocus
+    }
     case 'simulation': {
       const { design, options } = request.input
       return simulate(design, options) satisfies Simulation
     }
     case 'stageProposal':
       return proposeStage(request.input.requirements) satisfies StageProposal
+    case 'toleranceCorners': {
+      const { design, options } = request.input
+      return analyseToleranceCorners(design, options) satisfies ToleranceCornerSet
+    }
+    case 'spreadCheck': {
+      const { design, options } = request.input
+      return { evaluations: startRun(design, options).progress.total } satisfies SpreadCheck
+    }
   }
 }

@@ -5,6 +5,7 @@ import { Analysis, AnalysisRequest } from '@/server/contract/analyses'
 import { CompensatorProposals, CompensatorsRequest } from '@/server/contract/compensators'
 import { CornerSet, CornersRequest } from '@/server/contract/corners'
 import type { ProblemCode } from '@/server/contract/problems'
+import { RootLocus, RootLocusRequest } from '@/server/contract/rootLoci'
 import { Sample, SampleList, SampleSlug } from '@/server/contract/samples'
 import { Simulation, SimulationRequest } from '@/server/contract/simulations'
 import { SpreadRun, SpreadRunId, SpreadRunRequest } from '@/server/contract/spreadRuns'
@@ -134,6 +135,15 @@ export const ENDPOINTS: readonly Endpoint[] = [
       schema: Simulation,
       description: 'The transient, what is read off it, and the period map.',
     },
+    problems: COMPUTE_PROBLEMS,
+  },
+  {
+    operation: 'analyseRootLocus',
+    method: 'post',
+    path: '/root-loci',
+    summary: 'Follows the closed-loop poles as the loop gain is scaled.',
+    request: { name: 'RootLocusRequest', schema: RootLocusRequest },
+    response: { name: 'RootLocus', schema: RootLocus, description: 'The branches.' },
     problems: COMPUTE_PROBLEMS,
   },
   {

@@ -49,8 +49,11 @@ function operation({ operation: operationId, summary, parameters, request, respo
       requestBody: { required: true, content: { 'application/json': { schema: reference(request.name) } } },
     }),
     responses: {
-      200: {
+      [response.status ?? 200]: {
         description: response.description,
+        ...(response.status === 202 && {
+          headers: { Location: { description: 'Where to ask for it.', schema: { type: 'string' } } },
+        }),
         content: { 'application/json': { schema: reference(response.name) } },
       },
       ...problemResponses(problems),

@@ -5,8 +5,10 @@ import type { TaskRequest } from '@/server/compute/messages'
 import { AnalysisRequest } from '@/server/contract/analyses'
 import { CompensatorsRequest } from '@/server/contract/compensators'
 import { CornersRequest } from '@/server/contract/corners'
+import { RootLocusRequest } from '@/server/contract/rootLoci'
 import { SimulationRequest } from '@/server/contract/simulations'
 import { StageProposalRequest } from '@/server/contract/stageProposals'
+import { ToleranceCornersRequest } from '@/server/contract/toleranceCorners'
 import { methodNotAllowed } from '@/server/middleware/notFound'
 import { parse } from '@/server/middleware/parse'
 
@@ -29,7 +31,9 @@ export function computeRoutes(compute: ComputePool): Router {
   post('/analyses', (body) => ({ task: 'analysis', input: parse(AnalysisRequest, body) }))
   post('/corners', (body) => ({ task: 'corners', input: parse(CornersRequest, body) }))
   post('/compensators', (body) => ({ task: 'compensators', input: parse(CompensatorsRequest, body) }))
+  post('/root-loci', (body) => ({ task: 'rootLocus', input: parse(RootLocusRequest, body) }))
   post('/simulations', (body) => ({ task: 'simulation', input: parse(SimulationRequest, body) }))
   post('/stage-proposals', (body) => ({ task: 'stageProposal', input: parse(StageProposalRequest, body) }))
+  post('/tolerance-corners', (body) => ({ task: 'toleranceCorners', input: parse(ToleranceCornersRequest, body) }))
   return router
 }
