@@ -23,7 +23,7 @@ const REGIONS = [
 const LARGEST_TURN = Math.cos(Math.PI / 4)
 const MOST_HALVINGS = 6
 /** Relative width, in log ω, at which a crossing is found well enough. */
-const CLOSE = 1e-9
+const CLOSE = 1e-7
 
 /** Samples of one loop, in buffers that are used again for the next. */
 interface Walk {
@@ -208,7 +208,7 @@ function closestApproach(loopGain: LoopGain, { length, omega, re, im }: Walk): n
 /** |1 + T|² of a sampled dip, over the least one, up to which the true least may lie in it. */
 const CANDIDATE = 1.7
 const GOLDEN = (Math.sqrt(5) - 1) / 2
-const SECTIONS = 14
+const SECTIONS = 10
 
 function leastSquareBetween(loopGain: LoopGain, from: number, to: number): number {
   const distance = (logOmega: number) => {
