@@ -1,5 +1,5 @@
 /** The engine on one core, in this process: what a worker thread does for one request. */
-import { analyse, analyseCorners, proposeCompensator } from '@/converters'
+import { analyse, analyseCorners, proposeCompensator, simulate } from '@/converters'
 import { type BenchLine, medianDuration } from '@/scripts/bench/line'
 import { benchDesign, benchFrequencies } from '@/scripts/bench/subject'
 
@@ -23,6 +23,12 @@ export async function measureEngine(): Promise<BenchLine[]> {
       measured: await medianDuration(30, () => analyseCorners(benchDesign, options)),
       unit: 'ms',
       goal: 300,
+    },
+    {
+      what: 'Closed loop cycle by cycle, 2 000 periods',
+      measured: await medianDuration(20, () => simulate(benchDesign, { cycles: 1980 })),
+      unit: 'ms',
+      goal: 150,
     },
   ]
 }
