@@ -17,7 +17,7 @@ import { BIAS, TARGET } from './closedCircuit'
 import { closedLoopMap, closedOrbit, type ClosedOrbit } from './closedOrbit'
 import { readTransient } from './readings'
 import type { SimulationOptions } from './scenario'
-import { createSimulator, type Cycle, type Limits } from './simulator'
+import { createSimulator, type Cycle, type Limits, type Simulator } from './simulator'
 
 /** Periods at rest before anything happens. */
 const BEFORE = 20
@@ -58,8 +58,8 @@ export function simulateLoop(design: DesignDocument, options: SimulationOptions)
   )
   const history: Cycle[] = []
   for (let k = 0; k < BEFORE + cycles; k++) {
-    const cycle = simulator.run(plan.inputs(k))
-    if (!Number.isFinite(cycle.meanOutput)) throw runaway()
+    const cycle = runPeriod(simulator, plan.inputs(k))
+    if (!Object.values(cycle).every(Number.isFinite)) throw runaway()
     history.push(cycle)
   }
   const deviation = history.map(({ meanOutput }) => meanOutput - design.output.voltage)
@@ -78,6 +78,15 @@ export function simulateLoop(design: DesignDocument, options: SimulationOptions)
     duty: pick('duty'),
     readings: readTransient(deviation, pick('duty'), BEFORE, period),
     prediction,
+  }
+}
+
+function runPeriod(simulator: Simulator, inputs: ReturnType<Plan['inputs']>): Cycle {
+  try {
+    return simulator.run(inputs)
+  } catch (cause) {
+    if (cause instanceof RangeError) throw runaway()
+    throw cause
   }
 }
 

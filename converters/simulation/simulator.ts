@@ -10,6 +10,9 @@ import { createStepper, LEVELS, type Stepper } from './stepper'
 /** Coarse steps in a period. */
 const COARSE = 32
 
+/** Steps and phases in a period: some hundreds in the busiest that are in order. */
+const MOST_TURNS = 5000
+
 type Phase = 'on' | 'off' | 'idle'
 type Amplifier = 'linear' | 'low' | 'high'
 
@@ -29,7 +32,7 @@ export interface Cycle {
 }
 
 export interface Simulator {
-  /** Runs one period with these inputs and returns its summary. */
+  /** Runs one period with these inputs and returns its summary. @throws {RangeError} if the states run away. */
   readonly run: (inputs: { readonly line: number; readonly extraLoad: number; readonly target: number }) => Cycle
   readonly state: Float64Array
 }
@@ -130,7 +133,9 @@ export function createSimulator(circuit: ClosedCircuit, start: Float64Array, lim
       }
       /** Where the phase is left at the latest, after the clock. */
       const deadline = () => (phase === 'on' ? limits.duty * period : period)
-      for (;;) {
+      for (let turns = 0; ; turns++) {
+        // States beyond the range of numbers end no phase, and currents near nothing may end them all at once.
+        if (turns > MOST_TURNS) throw new RangeError('a period does not end')
         limitAmplifier(phase)
         const stepper = stepperOf(phase)
         let level = 0

@@ -161,4 +161,22 @@ describe('the simulation of a step', () => {
     }
     throw new Error('was not refused')
   })
+
+  it('ends in words where currents run away, such as with a constant-power load that no loop can hold', () => {
+    const design: DesignDocumentInput = {
+      topology: 'buck-boost',
+      switchingFrequency: 91.5e3,
+      line: { minimum: 1.24, nominal: 1.24, maximum: 1.24 },
+      output: { voltage: 0.0916, currentMinimum: 57.4, currentMaximum: 57.4 },
+      load: 'constant-power',
+      inductor: { inductance: 32.7e-6 },
+      outputCapacitors: [{ count: 1, capacitance: 440e-6 }],
+      rectifier: { kind: 'diode', forwardVoltage: 0.5 },
+      modulator: { kind: 'voltage-mode', rampAmplitude: 1.6 },
+      sense: { referenceVoltage: 0.0916, upperResistance: 10e3 },
+      compensator: { type: 'III', parts: { R2: 2.25e3, R3: 68, C1: 13e-9, C2: 50e-12, C3: 225e-12 } },
+    }
+    expect(analyse(design).margins!.isStable).toBe(false)
+    expect(() => simulate(design, { cycles: 20_000 })).toThrow(/runs away/)
+  })
 })
