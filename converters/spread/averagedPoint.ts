@@ -9,7 +9,6 @@ import type { LinearModel } from '../averaged/linearModel'
 import { MEASURES, type Circuit } from '../circuit'
 import { openPlant } from '../plant'
 import { derivative, dot, read } from '../switched/flow'
-import { findOrbit } from '../switched/orbit'
 import { dutyNear } from './averagedDuty'
 import { discontinuousRest } from './discontinuousRest'
 
@@ -19,13 +18,17 @@ export interface AveragedPoint {
   readonly model: LinearModel
 }
 
+/** Measures that a circuit needs for this: those of output, switch and rectifier, which come first. */
+export const AVERAGED_MEASURES = MEASURES.rectifierCurrent + 1
+
 /**
  * @param guess - duty cycle of a circuit like this one.
  * @throws DesignError when no duty cycle gives the wanted output.
  */
 export function averagedPoint(circuit: Circuit, guess: number): AveragedPoint {
+  const duty = dutyNear(circuit, guess)
   // The search near the guess cannot tell why it fails; the orbit's own search can, and sees every branch.
-  const duty = dutyNear(circuit, guess) ?? findOrbit(circuit).dutyCycle
+  if (duty === null) return exactPoint(circuit)
   const stage = averageStage(circuit, duty)
   const { rectifier, modulator } = circuit.design
   const valley = rectifier.kind === 'diode' ? rectifierValley(circuit, stage, duty) : Infinity

@@ -43,9 +43,13 @@ interface Scratch {
 
 /**
  * @param base - any member of the family.
+ * @param measures - how many of the measures, from the first, its members have.
  * @returns the circuit of another member, whose document differs from the base's in nothing that shapes the network otherwise.
  */
-export function circuitFamily(base: Circuit): (design: DesignDocument, point: PlantPoint) => Circuit {
+export function circuitFamily(
+  base: Circuit,
+  measures = base.on.C.length,
+): (design: DesignDocument, point: PlantPoint) => Circuit {
   const capacitors = capacitorStates(base)
   const baseLoad = linearLoad(base.design, base.outputCurrent)
   const ports = capacitors.length + 1
@@ -66,9 +70,9 @@ export function circuitFamily(base: Circuit): (design: DesignDocument, point: Pl
       esr: capacitors.map((capacitor, k) => values[k]!.esr - capacitor.base.esr),
       conductance: load.conductance - baseLoad.conductance,
     }
-    const on = changed(base.on, capacitors, change, scratch)
-    const off = changed(base.off, capacitors, change, scratch)
-    const idle = stops ? changed(base.idle, capacitors, change, scratch) : base.idle
+    const on = changed(base.on, measures, capacitors, change, scratch)
+    const off = changed(base.off, measures, capacitors, change, scratch)
+    const idle = stops ? changed(base.idle, measures, capacitors, change, scratch) : base.idle
     if (!on || !off || !idle) return buildCircuit(design, lineVoltage, outputCurrent)
     return {
       ...base,
@@ -120,6 +124,7 @@ function inductanceRatio(base: DesignDocument, design: DesignDocument, state: st
 /** One interval after the change; null where the changed network has no unique answer. */
 function changed(
   { A, B, C, D }: Interval,
+  measures: number,
   capacitors: readonly CapacitorState[],
   { rates, esr, conductance }: Change,
   { z, feedback }: Scratch,
@@ -148,7 +153,7 @@ function changed(
   const changedC: number[][] = []
   const changedD: number[][] = []
   /** A row of the base, with its share of what z feeds back. */
-  for (let row = 0; row < n + C.length; row++) {
+  for (let row = 0; row < n + measures; row++) {
     const isState = row < n
     const states = (isState ? A[row]! : C[row - n]!).slice()
     const inputs = (isState ? B[row]! : D[row - n]!).slice()

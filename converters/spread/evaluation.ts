@@ -13,7 +13,7 @@ import { eventsOf } from '../switched/events'
 import { findContinuousOrbit, findOrbit } from '../switched/orbit'
 import { periodMatrix } from '../switched/periodMap'
 import { switchedResponses } from '../switched/response'
-import { averagedPoint, type AveragedPoint } from './averagedPoint'
+import { AVERAGED_MEASURES, averagedPoint, type AveragedPoint } from './averagedPoint'
 import { circuitFamily } from './circuitFamily'
 import { marginReader, type LoopShape } from './fastMargins'
 import type { SpreadModel } from './options'
@@ -46,7 +46,7 @@ export function evaluatorFor(base: DesignDocument, model: SpreadModel): Evaluato
   requireNetwork(base)
   const { line, output, switchingFrequency } = base
   const centre = buildCircuit(base, line.nominal, output.currentMaximum)
-  const member = circuitFamily(centre)
+  const member = circuitFamily(centre, model === 'averaged' ? AVERAGED_MEASURES : undefined)
   const readMargins = marginReader(switchingFrequency)
   const guess = continuousDuty(centre)
   const open = model === 'averaged' ? openAveraged : openSwitched

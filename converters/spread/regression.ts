@@ -17,17 +17,20 @@ export function emptySums(variables: number): RegressionSums {
   return { variables, count: 0, products: new Float64Array((variables + 2) ** 2) }
 }
 
-/**
- * @param x - about the middle of their ranges and of order one, so that sums of squares keep their digits.
- * @param y - likewise
- */
-export function addToSums(sums: RegressionSums, x: Float64Array, y: number): void {
-  const { variables, products } = sums
-  const size = variables + 2
+/** (1, x₁ … x_d, y) to be filled in: x about the middle of its range, both of order one, so that squares keep their digits. */
+export function regressionRow(variables: number): Float64Array {
+  const row = new Float64Array(variables + 2)
+  row[0] = 1
+  return row
+}
+
+export function addToSums(sums: RegressionSums, row: Float64Array): void {
+  const { products } = sums
+  const size = row.length
   sums.count++
   for (let i = 0; i < size; i++) {
-    const left = i === 0 ? 1 : i <= variables ? x[i - 1]! : y
-    for (let j = i; j < size; j++) products[i * size + j]! += left * (j === 0 ? 1 : j <= variables ? x[j - 1]! : y)
+    const left = row[i]!
+    for (let j = i; j < size; j++) products[i * size + j]! += left * row[j]!
   }
 }
 

@@ -6,7 +6,7 @@ import type { Evaluation, Refusal } from './evaluation'
 import { mergeFailures, withFailure } from './failures'
 import { slackOf, verdictsOf } from './judging'
 import type { SpreadModel } from './options'
-import { addToSums, emptySums, mergeSums, type RegressionSums } from './regression'
+import { addToSums, emptySums, mergeSums, regressionRow, type RegressionSums } from './regression'
 import type { AppliedTargets, PlacedMargins, SpreadFailure, SpreadFigure, VariedQuantity, YieldKey } from './results'
 import { addToSobol, emptySobol, mergeSobol, type SobolSums } from './sobol'
 import type { Sample } from './variation'
@@ -91,7 +91,7 @@ export function accumulate(settings: SpreadSettings, from: number, capacity: num
     modulusMargin: 0,
   }
   const kept: KeptSample[] = []
-  const deviations = new Float64Array(quantities.length)
+  const row = regressionRow(quantities.length)
   let evaluated = 0
   let worst: PlacedMargins | null = null
   let failures: SpreadFailure[] = []
@@ -112,12 +112,14 @@ export function accumulate(settings: SpreadSettings, from: number, capacity: num
     const { margins } = found
     for (let i = 0; i < quantities.length; i++) {
       const { low, high } = quantities[i]!
-      deviations[i] = (2 * values[i]! - high - low) / (high - low)
+      row[i + 1] = (2 * values[i]! - high - low) / (high - low)
     }
     for (const figure of FIGURES) {
       columns[figure][passed.reached] = margins[figure] ?? Number.NaN
       const relative = relativeFigure(margins, nominal, figure)
-      if (relative !== null) addToSums(regression[figure], deviations, relative)
+      if (relative === null) continue
+      row[quantities.length + 1] = relative
+      addToSums(regression[figure], row)
     }
     const verdicts = verdictsOf(margins, targets)
     for (const key of YIELD_KEYS) if (verdicts[key]) passed[key]++

@@ -36,19 +36,22 @@ describe('confidence of a proportion', () => {
     [3, 100_000],
   ] as const
 
-  it.each(counts)('of %i in %i has the limits that SciPy’s beta quantile gives', (successes, trials) => {
-    const [lower, upper] = scipy<[number, number]>(
+  it('has the limits that SciPy’s beta quantile gives', () => {
+    const expected = scipy<[number, number][]>(
       `
 import scipy.stats
-k, n = data
-lower = scipy.stats.beta.ppf(0.025, k, n - k + 1) if k > 0 else 0.0
-upper = scipy.stats.beta.ppf(0.975, k + 1, n - k) if k < n else 1.0
-answer = [float(lower), float(upper)]`,
-      [successes, trials],
+quantile = scipy.stats.beta.ppf
+answer = [[float(quantile(0.025, k, n - k + 1)) if k > 0 else 0.0,
+           float(quantile(0.975, k + 1, n - k)) if k < n else 1.0] for k, n in data]`,
+      counts,
     )
-    const interval = clopperPearson(successes, trials, 0.95)
-    expect(Math.abs(interval.lower - lower)).toBeLessThan(1e-9 * Math.max(lower, 1e-4))
-    expect(Math.abs(interval.upper - upper)).toBeLessThan(1e-9 * upper)
+    counts.forEach(([successes, trials], i) => {
+      const interval = clopperPearson(successes, trials, 0.95)
+      const [lower, upper] = expected[i]!
+      const where = `${successes} in ${trials}`
+      expect(Math.abs(interval.lower - lower), where).toBeLessThan(1e-9 * Math.max(lower, 1e-4))
+      expect(Math.abs(interval.upper - upper), where).toBeLessThan(1e-9 * upper)
+    })
   })
 
   it('inverts to SciPy’s quantiles for half-integer and lopsided parameters too', () => {

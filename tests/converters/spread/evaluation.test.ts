@@ -1,6 +1,7 @@
 /** The quick route of the spread against the exact one: the same circuits, responses and margins. */
 import { describe, expect, it } from 'vitest'
 import { modelResponses } from '@/converters/averaged/linearModel'
+import { analyse } from '@/converters'
 import { buildCircuit } from '@/converters/circuit'
 import { readMargins, type LoopGain } from '@/converters/loop/margins'
 import { modulus, subtract } from '@/converters/numeric/complex'
@@ -10,12 +11,14 @@ import { marginsOf } from '@/converters/analysis'
 import { averagedPoint } from '@/converters/spread/averagedPoint'
 import { circuitFamily } from '@/converters/spread/circuitFamily'
 import { evaluatorFor, requireNetwork, type Evaluation } from '@/converters/spread/evaluation'
+import { runSpread } from '@/converters/spread'
 import { SPREAD_GROUPS } from '@/converters/spread/options'
 import { controlToOutput } from '@/converters/spread/plantResponse'
 import { latinHypercube } from '@/converters/spread/random'
 import { sampleAt, variablesOf, type Sample } from '@/converters/spread/variation'
 import type { MarginSummary } from '@/converters/results'
 import { angleBetween, expectRelative } from '@/tests/support/expectRelative'
+import { buckDesign } from '@/tests/support/designs'
 import { SPREAD_DESIGNS } from './designs'
 
 const COUNT = 40
@@ -123,6 +126,20 @@ describe.each(Object.keys(SPREAD_DESIGNS))('%s', (name) => {
     })
   })
 
+  it('has an averaged operating point and margins that differ from those about the exact orbit by its ripple alone', () => {
+    const evaluate = evaluatorFor(parseDesign(SPREAD_DESIGNS[name]), 'averaged')
+    samplesOf(name, 12).forEach((sample, i) => {
+      const plant = openPlant(sample.design, sample.point)
+      const expected = marginsOf(plant, requireNetwork(sample.design), 'averaged')
+      const { conduction, dutyCycle, margins } = evaluate(sample) as Evaluation
+      expect(conduction, `sample ${i}`).toBe(plant.orbit.conduction)
+      // Ripple squared, relative: up to about a percent with these designs.
+      expectRelative(dutyCycle, plant.orbit.dutyCycle, 0.01)
+      expectRelative(margins.crossover!, expected.crossover!, 0.01)
+      expect(angleBetween(margins.phaseMargin!, expected.phaseMargin!), `sample ${i}`).toBeLessThan(0.5)
+    })
+  })
+
   it('agrees with the analysis of each sample as a design of its own', () => {
     const evaluate = evaluatorFor(parseDesign(SPREAD_DESIGNS[name]), 'switched')
     samplesOf(name, 8).forEach((sample, i) => {
@@ -134,4 +151,19 @@ describe.each(Object.keys(SPREAD_DESIGNS))('%s', (name) => {
       expectSameMargins(evaluation.margins, expected, `sample ${i}`)
     })
   })
+})
+
+it('takes bias derating as a capacitor that is so much smaller', () => {
+  const bank = { count: 4, capacitance: 47e-6, esr: 3e-3 }
+  const derated = parseDesign(buckDesign({ outputCapacitors: [{ ...bank, biasDerating: 0.4 }] }))
+  const smaller = parseDesign(buckDesign({ outputCapacitors: [{ ...bank, capacitance: 0.6 * 47e-6 }] }))
+  const circuits = [derated, smaller].map((design) => buildCircuit(design, 12, 8))
+  expectRelative(circuits[0]!.outputStates[0]!.capacitance, circuits[1]!.outputStates[0]!.capacitance, 1e-12)
+  const resonances = [derated, smaller].map(
+    (design) => analyse(design).plant.closedForms.find(({ key }) => key === 'resonance')!.value,
+  )
+  expectRelative(resonances[0]!, resonances[1]!, 1e-12)
+  // Spread about what bias leaves, not about what is printed on the part.
+  const margins = [derated, smaller].map((design) => runSpread(design, { samples: 100 }).distributions.crossover!.mean)
+  expectRelative(margins[0]!, margins[1]!, 1e-6)
 })

@@ -1,7 +1,7 @@
 /** Ranking, where the answer can be written down. */
 import { describe, expect, it } from 'vitest'
 import { latinHypercube } from '@/converters/spread/random'
-import { addToSums, emptySums, standardisedFit } from '@/converters/spread/regression'
+import { addToSums, emptySums, regressionRow, standardisedFit } from '@/converters/spread/regression'
 import { addToSobol, emptySobol, saltelliRows, sobolIndices } from '@/converters/spread/sobol'
 
 describe('standardised regression coefficients', () => {
@@ -12,10 +12,13 @@ describe('standardised regression coefficients', () => {
     const cube = latinHypercube(4000, 3, 21)
     const sums = emptySums(3)
     const point = new Float64Array(3)
+    const row = regressionRow(3)
     for (let i = 0; i < 4000; i++) {
       cube.point(i, point)
       const x = point.map((u, k) => (2 * u - 1) * widths[k]!)
-      addToSums(sums, x, 7 + x.reduce((sum, value, k) => sum + weights[k]! * value, 0) + noise(x))
+      row.set(x, 1)
+      row[4] = 7 + x.reduce((sum, value, k) => sum + weights[k]! * value, 0) + noise(x)
+      addToSums(sums, row)
     }
     return standardisedFit(sums)!
   }
