@@ -64,6 +64,15 @@ answer = float(np.max(1/np.abs(1 + T)))`,
     expect(margins.gainCrossings).toHaveLength(2)
   })
 
+  it('of a stable loop that also crosses with its phase ahead: −180° is as near from that side', () => {
+    // 4s/(1 + s)²: a differentiator below, a lag above, no encirclement; at both crossings, (2 ± √3), the phase is ±60°.
+    const margins = readMargins((w) => divide(multiply(complex(4), s(w)), multiply(lag(w, 1), lag(w, 1))), 100)
+    expect(margins.isStable).toBe(true)
+    expect(margins.gainCrossings).toHaveLength(2)
+    expectRelative(margins.crossover!, (2 + Math.sqrt(3)) / (2 * Math.PI), 1e-9)
+    expectRelative(margins.phaseMargin!, 120, 1e-9)
+  })
+
   it('says that there is none when the gain never reaches one', () => {
     const margins = readMargins((w) => over(0.5, lag(w, 1)), 100)
     expect(margins).toMatchObject({
