@@ -4,6 +4,7 @@ import { Caution, Warnings } from '@/components/design/Cautions'
 import { Columns } from '@/components/design/Columns'
 import { EntryNotice } from '@/components/design/EntryNotice'
 import { Fault } from '@/components/design/Fault'
+import { ClosedLoopMap } from '@/components/loop/ClosedLoopMap'
 import { LoopFigures } from '@/components/loop/LoopFigures'
 import { LoopPlot } from '@/components/loop/LoopPlot'
 import { NetworkCard } from '@/components/loop/NetworkCard'
@@ -12,8 +13,6 @@ import { WindowCard } from '@/components/loop/WindowCard'
 import { WizardCard } from '@/components/loop/WizardCard'
 import { PointChips } from '@/components/plant/PointChips'
 import { Responses } from '@/components/plant/Responses'
-import { PoleZeroMap } from '@/components/plots/PoleZeroMap'
-import { upperHalf, type PlaneRoot } from '@/components/plots/sPlane'
 import { Card } from '@/components/ui/Card'
 import { Notice } from '@/components/ui/Notice'
 import { Loading } from '@/components/ui/states'
@@ -151,21 +150,8 @@ const LoopDetails = memo(function LoopDetails({
       ) : (
         <Notice kind="fault">The closed loop does not settle, so there are no step responses to show.</Notice>
       )}
-      <Card>
-        <PoleZeroMap title="Closed-loop poles" fileName="steadrail-closed-loop" roots={loopRoots(analysis, loop)} />
-        <Text variant="small" tone="quiet">
-          Copper: the loop closed. Teal: the power stage alone. Direction is damping, distance is frequency.
-        </Text>
-      </Card>
+      <ClosedLoopMap analysis={analysis} loop={loop} />
       <Caution />
     </>
   )
 })
-
-function loopRoots(analysis: Analysis, loop: Loop): PlaneRoot[] {
-  return [
-    ...upperHalf(loop.closedLoopPoles).map((root) => ({ root, kind: 'pole' as const, owner: 'loop' as const })),
-    ...upperHalf(analysis.plant.poles).map((root) => ({ root, kind: 'pole' as const, owner: 'stage' as const })),
-    ...upperHalf(analysis.plant.zeros).map((root) => ({ root, kind: 'zero' as const, owner: 'stage' as const })),
-  ]
-}

@@ -9,6 +9,7 @@ const TABS = [
   { name: 'Stage', href: '/design/stage', icon: 'stage' },
   { name: 'Plant', href: '/design/plant', icon: 'plant' },
   { name: 'Loop', href: '/design/loop', icon: 'loop' },
+  { name: 'Spread', href: '/design/spread', icon: 'spread' },
 ] as const satisfies readonly { name: string; href: string; icon: IconName }[]
 
 /** The screens of a design: at the foot of a phone, within reach of the thumb; a rail on the left of a wide screen. */

@@ -1,15 +1,11 @@
-import { lazy, Suspense } from 'react'
 import { figure } from '@/components/format'
+import { LaterStep } from '@/components/plots/later'
 import { Card } from '@/components/ui/Card'
 import { Figure } from '@/components/ui/Figure'
 import { FigureGrid } from '@/components/ui/FigureGrid'
-import { Loading } from '@/components/ui/states'
 import { Text } from '@/components/ui/Text'
 import type { Mode, StepResponse } from '@/converters/results'
 import type { Analysis } from '@/server/contract/analyses'
-
-// Its drawing library is as large as the rest of the screens together: it comes when a step is to be drawn.
-const StepPlot = lazy(() => import('@/components/plots/StepPlot'))
 
 /** What the output does after a step of the load and of the line. */
 export function Steps({ steps }: { readonly steps: NonNullable<Analysis['steps']> }) {
@@ -29,15 +25,13 @@ function Step({ name, unit, step }: { readonly name: string; readonly unit: 'A' 
   const mode = step.modes[0]
   return (
     <>
-      <Suspense fallback={<Loading label={`Drawing the ${name.toLowerCase()}`} bars={[220]} />}>
-        <StepPlot
-          title={`${name} of ${size}`}
-          fileName={`steadrail-${name.toLowerCase().replace(' ', '-')}`}
-          summary={`${name} of ${size}: peak ${figure(step.peakDeviation, 'V')} after ${figure(step.peakTime, 's')}.`}
-          time={step.time}
-          deviation={step.outputDeviation}
-        />
-      </Suspense>
+      <LaterStep
+        title={`${name} of ${size}`}
+        fileName={`steadrail-${name.toLowerCase().replace(' ', '-')}`}
+        summary={`${name} of ${size}: peak ${figure(step.peakDeviation, 'V')} after ${figure(step.peakTime, 's')}.`}
+        time={step.time}
+        deviation={step.outputDeviation}
+      />
       <FigureGrid least={120}>
         <Figure label="Peak" value={figure(step.peakDeviation, 'V')} note={`after ${figure(step.peakTime, 's')}`} />
         <Figure

@@ -1,10 +1,19 @@
 import { useMemo } from 'react'
-import Svg, { G, Line, Path, Rect } from 'react-native-svg'
+import Svg, { Circle, G, Line, Path, Rect } from 'react-native-svg'
 import { placeLabels, textWidth, type Box } from './layout'
 import { PoleMark, ZeroMark } from './marks'
 import { PlotFrame } from './PlotFrame'
 import { PlotText } from './PlotText'
-import { placeOf, planeOf, radiusShare, type Plane, type PlaneRoot } from './sPlane'
+import {
+  partsOnPlane,
+  placeOf,
+  planeOf,
+  radiusShare,
+  thinned,
+  type Plane,
+  type PlanePoint,
+  type PlaneRoot,
+} from './sPlane'
 import { decadeLabel } from './ticks'
 import { figure, ratio } from '@/components/format'
 import { ROLE_NAMES, SHORT_NAMES } from '@/components/roots'
@@ -16,6 +25,12 @@ export interface PoleZeroMapProps {
   readonly fileName: string
   /** One of each conjugate pair. */
   readonly roots: readonly PlaneRoot[]
+  /** Many places behind the roots, as dots. */
+  readonly cloud?: readonly PlanePoint[]
+  /** Ways that the poles take, as lines. */
+  readonly branches?: readonly (readonly PlanePoint[])[]
+  /** Said to those who listen, in place of the list of roots. */
+  readonly summary?: string
 }
 
 const FOOT = 40 // px below the real axis
@@ -25,35 +40,59 @@ const LEAST_RING_STEP = 36 // px
 const DAMPINGS = [0.2, 0.5, 0.8] as const
 
 /** Poles and zeros in the s-plane: direction is damping, distance is frequency. */
-export function PoleZeroMap({ title, fileName, roots }: PoleZeroMapProps) {
-  const summary = roots.length === 0 ? 'No poles or zeros.' : roots.map(describe).join('. ')
+export function PoleZeroMap({ title, fileName, roots, cloud = NONE, branches = NONE, summary }: PoleZeroMapProps) {
+  const listed = roots.length === 0 ? 'No poles or zeros.' : roots.map(describe).join('. ')
   return (
     <PlotFrame
       title={title}
       fileName={fileName}
-      summary={summary}
+      summary={summary ?? listed}
       table={() => ({
         header: ['Kind', 'Hz', 'Real, rad/s', 'Imaginary, rad/s', 'Damping'],
-        rows: roots.map(({ root, kind }) => [
-          `${kind === 'pole' ? '×' : '○'} ${ROLE_NAMES[root.role]}`,
-          figure(root.frequency, 'Hz'),
-          root.real.toExponential(3),
-          root.imaginary.toExponential(3),
-          ratio(root.dampingRatio),
-        ]),
-        data: roots.map(({ root, kind }) => [
-          kind === 'pole' ? 1 : 0,
-          root.frequency,
-          root.real,
-          root.imaginary,
-          root.dampingRatio,
-        ]),
+        rows: [
+          ...roots.map(({ root, kind }) => [
+            `${kind === 'pole' ? '×' : '○'} ${ROLE_NAMES[root.role]}`,
+            figure(root.frequency, 'Hz'),
+            root.real.toExponential(3),
+            root.imaginary.toExponential(3),
+            ratio(root.dampingRatio),
+          ]),
+          ...everyFew(cloud).map((point) => [
+            '· sample',
+            figure(point.frequency, 'Hz'),
+            point.real.toExponential(3),
+            point.imaginary.toExponential(3),
+            ratio(dampingOf(point)),
+          ]),
+        ],
+        data: [
+          ...roots.map(({ root, kind }) => [
+            kind === 'pole' ? 1 : 0,
+            root.frequency,
+            root.real,
+            root.imaginary,
+            root.dampingRatio,
+          ]),
+          ...[...cloud, ...branches.flat()].map((point) => [
+            1,
+            point.frequency,
+            point.real,
+            point.imaginary,
+            dampingOf(point),
+          ]),
+        ],
       })}
     >
-      {(width) => <Map roots={roots} width={width} />}
+      {(width) => <Map roots={roots} cloud={cloud} branches={branches} width={width} />}
     </PlotFrame>
   )
 }
+
+const NONE: readonly never[] = []
+const ROWS = 40
+const everyFew = (points: readonly PlanePoint[]) =>
+  points.filter((_, index) => index % Math.max(1, Math.ceil(points.length / ROWS)) === 0)
+const dampingOf = ({ real, imaginary }: PlanePoint) => -real / Math.hypot(real, imaginary)
 
 function describe({ root, kind }: PlaneRoot): string {
   const where = root.halfPlane === 'right' ? ', in the right half plane' : ''
@@ -69,22 +108,36 @@ interface Frame {
 }
 
 /** The right half takes less room when nothing stands in it. */
-function frameOf(width: number, roots: readonly PlaneRoot[]): Frame {
-  const hasRight = roots.some(({ root }) => root.halfPlane === 'right')
+function frameOf(width: number, points: readonly PlanePoint[]): Frame {
+  const hasRight = points.some(({ real }) => real > 0)
   const share = hasRight ? 0.5 : 0.74
   const radius = Math.min(share * width - SIDE, 330)
   const centre = Math.min(share * width, width - (hasRight ? radius + SIDE : 0.26 * width))
   return { width, height: radius + HEAD + FOOT, centre, axis: radius + HEAD, radius }
 }
 
-function Map({ roots, width }: { readonly roots: readonly PlaneRoot[]; readonly width: number }) {
+interface MapProps extends Required<Pick<PoleZeroMapProps, 'roots' | 'cloud' | 'branches'>> {
+  readonly width: number
+}
+
+const CLOUD_CELLS = 140 // along the radius
+
+function Map({ roots, cloud, branches, width }: MapProps) {
   const theme = useTheme()
-  const frame = frameOf(width, roots)
-  const plane = useMemo(() => planeOf(roots), [roots])
-  const marks = roots.map((item) => {
-    const { x, y } = placeOf(plane, item.root)
-    return { item, x: frame.centre + x * frame.radius, y: frame.axis - y * frame.radius }
-  })
+  const { plane, dots, ways } = useMemo(() => {
+    const found = planeOf([...roots.map(({ root }) => root), ...cloud])
+    return {
+      plane: found,
+      dots: thinned(cloud, found, CLOUD_CELLS),
+      ways: branches.flatMap((branch) => partsOnPlane(branch, found)),
+    }
+  }, [roots, cloud, branches])
+  const frame = frameOf(width, [...roots.map(({ root }) => root), ...dots, ...ways.flat()])
+  const onFrame = (point: PlanePoint) => {
+    const { x, y } = placeOf(plane, point)
+    return { x: frame.centre + x * frame.radius, y: frame.axis - y * frame.radius }
+  }
+  const marks = roots.map((item) => ({ item, ...onFrame(item.root) }))
   const texts = marks.map(({ item }) => `${SHORT_NAMES[item.root.role]} ${figure(item.root.frequency, 'Hz')}`)
   const obstacles: Box[] = [
     ...marks.map(({ x, y }) => ({ x: x - 6, y: y - 6, width: 12, height: 12 })),
@@ -102,6 +155,23 @@ function Map({ roots, width }: { readonly roots: readonly PlaneRoot[]; readonly 
   return (
     <Svg width={width} height={frame.height} aria-hidden>
       <Ground frame={frame} plane={plane} theme={theme} />
+      {ways.map((way, index) => (
+        <Path
+          key={`way ${index}`}
+          d={`M${way
+            .map((point) => onFrame(point))
+            .map(({ x, y }) => `${x.toFixed(1)} ${y.toFixed(1)}`)
+            .join('L')}`}
+          stroke={theme.accent}
+          strokeWidth={1.4}
+          strokeLinejoin="round"
+          fill="none"
+        />
+      ))}
+      {dots.map((point, index) => {
+        const { x, y } = onFrame(point)
+        return <Circle key={`dot ${index}`} cx={x} cy={y} r={1.7} fill={theme.gain} fillOpacity={0.55} />
+      })}
       {marks.map(({ item, x, y }, index) => {
         const color = item.owner === 'stage' ? theme.gain : theme.accent
         const box = boxes[index]

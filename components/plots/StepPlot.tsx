@@ -1,9 +1,7 @@
 import { VictoryAxis, VictoryChart, VictoryLine } from 'victory-native'
 import { PlotFrame } from './PlotFrame'
-import { PLOT_TYPE } from './PlotText'
+import { PADDING, ticksAcross, tickText, unitFor, useAxisStyles } from './victoryStyle'
 import { figure } from '@/components/format'
-import { fonts } from '@/constants/theme'
-import { formatQuantity } from '@/converters/quantities'
 import { useTheme } from '@/hooks/useTheme'
 
 export interface StepPlotProps {
@@ -17,44 +15,30 @@ export interface StepPlotProps {
 const HEIGHT = 230
 
 /** The output's deviation over time after a step. */
-export default function StepPlot({ title, fileName, summary, time, deviation }: StepPlotProps) {
+export function StepPlot({ title, fileName, summary, time, deviation }: StepPlotProps) {
   const theme = useTheme()
-  const last = time.at(-1) ?? 1
-  const greatest = Math.max(...deviation.map(Math.abs), 1e-12)
-  const timeUnit = unitFor(last, 's')
-  const voltUnit = unitFor(greatest, 'V')
-  const lettering = { fontFamily: fonts.label, fontSize: PLOT_TYPE, fill: theme.quiet }
-  const axisStyle = {
-    axis: { stroke: theme.edge },
-    grid: { stroke: theme.rule, strokeWidth: 1 },
-    ticks: { stroke: 'none' },
-    tickLabels: { ...lettering, padding: 4 },
-    axisLabel: lettering,
-  }
+  const { across, down } = useAxisStyles()
+  const timeUnit = unitFor(time.at(-1) ?? 1, 's')
+  const voltUnit = unitFor(Math.max(...deviation.map(Math.abs), 1e-12), 'V')
   return (
     <PlotFrame title={title} fileName={fileName} summary={summary} table={() => tableOf(time, deviation)}>
       {(width) => (
-        <VictoryChart
-          width={width}
-          height={HEIGHT}
-          padding={{ left: 52, right: 12, top: 10, bottom: 44 }}
-          domainPadding={{ y: 8 }}
-        >
+        <VictoryChart width={width} height={HEIGHT} padding={PADDING} domainPadding={{ y: 8 }}>
           <VictoryAxis
             orientation="bottom"
-            offsetY={44}
+            offsetY={PADDING.bottom}
             crossAxis={false}
-            tickCount={Math.max(3, Math.floor(width / 80))}
+            tickCount={ticksAcross(width)}
             label={`Time, ${timeUnit.name}`}
-            style={{ ...axisStyle, axisLabel: { ...lettering, padding: 27 } }}
+            style={across}
           />
           <VictoryAxis
             dependentAxis
             crossAxis={false}
             tickCount={5}
             label={`Deviation, ${voltUnit.name}`}
-            tickFormat={(value: number) => String(value).replace('-', '−')}
-            style={{ ...axisStyle, axisLabel: { ...lettering, padding: 38 } }}
+            tickFormat={tickText}
+            style={down}
           />
           <VictoryLine
             data={time.map((seconds, index) => ({
@@ -67,13 +51,6 @@ export default function StepPlot({ title, fileName, summary, time, deviation }: 
       )}
     </PlotFrame>
   )
-}
-
-/** The prefix in which the largest value reads as 1 to 999. */
-function unitFor(greatest: number, unit: 's' | 'V'): { readonly size: number; readonly name: string } {
-  const exponent = Math.min(0, Math.max(-12, 3 * Math.floor(Math.log10(greatest) / 3)))
-  const name = formatQuantity(10 ** exponent, unit).split(' ')[1] ?? unit
-  return { size: 10 ** exponent, name }
 }
 
 const ROWS = 40

@@ -5,6 +5,13 @@
  */
 import type { Root } from '@/converters/results'
 
+/** A place on the plane: a root without its meaning. */
+export type PlanePoint = Pick<Root, 'real' | 'imaginary' | 'frequency'>
+
+export function pointOf({ real, imaginary }: Pick<Root, 'real' | 'imaginary'>): PlanePoint {
+  return { real, imaginary, frequency: Math.hypot(real, imaginary) / (2 * Math.PI) }
+}
+
 export interface PlaneRoot {
   readonly root: Root
   readonly kind: 'pole' | 'zero'
@@ -20,10 +27,10 @@ export interface Plane {
 
 const FEWEST_DECADES = 2
 
-/** Rings that hold every root. The centre stands for a decade below the slowest root. */
-export function planeOf(roots: readonly PlaneRoot[]): Plane {
-  const exponents = roots
-    .map(({ root }) => root.frequency)
+/** Rings that hold every point. The centre stands for a decade below the slowest. */
+export function planeOf(points: readonly PlanePoint[]): Plane {
+  const exponents = points
+    .map(({ frequency }) => frequency)
     .filter((hertz) => hertz > 0)
     .map(Math.log10)
   const least = exponents.length === 0 ? 2 : Math.min(...exponents)
@@ -41,7 +48,7 @@ export function radiusShare(plane: Plane, frequency: number): number {
 }
 
 /** Position in the unit half disc: x to the right, y upwards. */
-export function placeOf(plane: Plane, root: Root): { readonly x: number; readonly y: number } {
+export function placeOf(plane: Plane, root: PlanePoint): { readonly x: number; readonly y: number } {
   const share = radiusShare(plane, root.frequency)
   const modulus = Math.hypot(root.real, root.imaginary)
   if (modulus === 0) return { x: 0, y: 0 }
@@ -51,4 +58,29 @@ export function placeOf(plane: Plane, root: Root): { readonly x: number; readonl
 /** One of each conjugate pair, and the real ones. */
 export function upperHalf(roots: readonly Root[]): Root[] {
   return roots.filter((root) => root.imaginary >= 0)
+}
+
+/** As many of the points as can be told apart: one for each cell of a grid of `cells` along the radius. */
+export function thinned(points: readonly PlanePoint[], plane: Plane, cells: number): PlanePoint[] {
+  const kept = new Map<string, PlanePoint>()
+  for (const point of points) {
+    const { x, y } = placeOf(plane, point)
+    const cell = `${Math.round(x * cells)} ${Math.round(y * cells)}`
+    if (!kept.has(cell)) kept.set(cell, point)
+  }
+  return [...kept.values()]
+}
+
+/** The parts of a branch that lie on the rings; beyond them it is not drawn. */
+export function partsOnPlane(branch: readonly PlanePoint[], plane: Plane): PlanePoint[][] {
+  const parts: PlanePoint[][] = []
+  let isOn = false
+  for (const point of branch) {
+    const exponent = Math.log10(point.frequency)
+    const isInside = exponent >= plane.lowest && exponent <= plane.lowest + plane.decades
+    if (isInside && !isOn) parts.push([])
+    if (isInside) parts.at(-1)?.push(point)
+    isOn = isInside
+  }
+  return parts.filter((part) => part.length > 1)
 }

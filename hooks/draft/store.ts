@@ -1,5 +1,6 @@
 /** The draft of this browser: one store that every screen reads, kept in local storage, shared between its tabs. */
 import type { DesignDocument } from '@/converters/document'
+import { readStored, writeStored } from '@/hooks/browserStorage'
 import { settle, type Texts } from './entries'
 import {
   DRAFT_KEY,
@@ -16,27 +17,13 @@ const listeners = new Set<() => void>()
 let undone: readonly Draft[] = []
 let current: StoredDraft = load()
 
-function storage(): Storage | null {
-  try {
-    return typeof window === 'undefined' ? null : window.localStorage
-  } catch {
-    return null // forbidden by the browser's settings: the draft then lives as long as the page
-  }
-}
-
 function load(): StoredDraft {
-  return readDraft(storage()?.getItem(DRAFT_KEY) ?? null)
+  return readDraft(readStored(DRAFT_KEY))
 }
 
 function set(next: StoredDraft): void {
   current = next
-  if (next.kind === 'draft') {
-    try {
-      storage()?.setItem(DRAFT_KEY, JSON.stringify(next.draft))
-    } catch {
-      // Storage is full or forbidden: the page goes on with what it holds.
-    }
-  }
+  if (next.kind === 'draft') writeStored(DRAFT_KEY, JSON.stringify(next.draft))
   for (const listener of listeners) listener()
 }
 

@@ -53,7 +53,7 @@ export async function openSample(page: Page, title: string): Promise<void> {
 }
 
 /** To another screen of the open design. */
-export async function goTo(page: Page, screen: 'Stage' | 'Plant' | 'Loop'): Promise<void> {
+export async function goTo(page: Page, screen: 'Stage' | 'Plant' | 'Loop' | 'Spread'): Promise<void> {
   await page
     .getByRole('navigation', { name: 'Screens of the design' })
     .getByRole('link', { name: screen, exact: true })

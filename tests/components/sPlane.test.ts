@@ -20,7 +20,7 @@ function root(real: number, imaginary: number): Root {
 describe('the s-plane', () => {
   const slow = root(-2 * Math.PI * 100, 0)
   const fast = root(-2 * Math.PI * 3e5, 2 * Math.PI * 4e5)
-  const plane = planeOf([slow, fast].map((item) => ({ root: item, kind: 'pole', owner: 'stage' })))
+  const plane = planeOf([slow, fast])
 
   it('keeps the direction of every root, which is its damping', () => {
     const { x, y } = placeOf(plane, fast)
