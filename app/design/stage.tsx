@@ -10,25 +10,34 @@ import type { StagePart } from '@/components/schematic/stageParts'
 import { AmplifierFields, ModulatorFields } from '@/components/stage/ControlFields'
 import {
   BanksFields,
+  CouplingCapacitorFields,
   InductorFields,
   LineFields,
   LoadFields,
   RectifierFields,
+  SecondInductorFields,
   SwitchFields,
+  TransformerFields,
 } from '@/components/stage/groups'
+import { InputFilterFields } from '@/components/stage/InputFilterFields'
 import { PartSheet } from '@/components/stage/PartSheet'
 import { StressTable } from '@/components/stage/StressTable'
 import { TargetFields } from '@/components/stage/TargetFields'
+import { ToleranceFields } from '@/components/stage/ToleranceFields'
+import { TopologyField } from '@/components/stage/TopologyField'
 import { Card } from '@/components/ui/Card'
 import { LinkButton } from '@/components/ui/Button'
 import { Loading } from '@/components/ui/states'
 import { Text } from '@/components/ui/Text'
+import { hasPart } from '@/hooks/draft/edits'
 import { useDraft } from '@/hooks/draft/useDraft'
 import { useDesignAnalysis } from '@/hooks/useDesignAnalysis'
 import { useLayout } from '@/hooks/useLayout'
 
 export default function StageScreen() {
   const { design } = useDraft()
+  const { topology } = design
+  const hasTwo = hasPart(topology, 'secondInductor')
   const { isExtraWide } = useLayout()
   const { analysis, error, isStale, retry } = useDesignAnalysis()
   const [part, setPart] = useState<StagePart | null>(null)
@@ -41,7 +50,8 @@ export default function StageScreen() {
         phoneOrder={['curves', 'figures', 'inputs']}
         inputs={
           <>
-            <Card title="Line and load">
+            <Card title="Circuit, line and load">
+              <TopologyField />
               <LineFields />
               <LoadFields />
             </Card>
@@ -49,11 +59,32 @@ export default function StageScreen() {
               <SwitchFields />
               <RectifierFields />
             </Card>
-            <Card title="Inductor">
-              <InductorFields />
-            </Card>
+            {hasPart(topology, 'transformer') ? (
+              <Card title="Transformer">
+                <TransformerFields />
+                {topology === 'flyback' ? <InductorFields /> : null}
+              </Card>
+            ) : null}
+            {topology === 'flyback' ? null : (
+              <Card title={hasTwo ? 'First inductor' : 'Inductor'}>
+                <InductorFields />
+              </Card>
+            )}
+            {hasTwo ? (
+              <>
+                <Card title="Second inductor">
+                  <SecondInductorFields />
+                </Card>
+                <Card title="Coupling capacitor">
+                  <CouplingCapacitorFields />
+                </Card>
+              </>
+            ) : null}
             <Card title="Output capacitors">
               <BanksFields />
+            </Card>
+            <Card title="Input filter">
+              <InputFilterFields />
             </Card>
             {isExtraWide ? null : <ControlCards />}
           </>
@@ -104,6 +135,9 @@ function ControlCards() {
       </Card>
       <Card title="What the loop should hold">
         <TargetFields />
+      </Card>
+      <Card title="Tolerances">
+        <ToleranceFields />
       </Card>
     </>
   )

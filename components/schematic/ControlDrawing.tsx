@@ -1,25 +1,23 @@
 import { G, Rect } from 'react-native-svg'
-import { Lines, type DrawingProps } from './PowerDrawing'
+import { Lines } from './Lines'
+import type { DrawingProps } from './PowerDrawing'
 import { partValues } from './stageParts'
 import { Arrow, Junction, STROKE, Wire } from './symbols'
 import { PlotText } from '@/components/plots/PlotText'
 
 /** Error amplifier and modulator: the way back from the output to the switch. */
 export function ControlDrawing({ design, layout, color, ground, valueColor }: DrawingProps) {
-  const { control, top, bottom, beforeNode, node, load, width } = layout
+  const { control, top, gate, load, width } = layout
   const values = partValues(design)
   const middle = (control.top + control.bottom) / 2
-  const isBoost = design.topology === 'boost'
-  const gate = isBoost ? node - 20 : beforeNode
-  const gateFrom = isBoost ? (top + bottom) / 2 : top + 20
   const out = width - 4
   const modulatorWidth = control.middle - control.left - 14
   const amplifierLeft = control.middle + 14
   const block = { top: control.top, height: control.bottom - control.top, color, ground, valueColor }
   return (
     <G>
-      <Wire color={color} d={`M${gate} ${gateFrom}V${control.top}`} />
-      <Arrow x={gate} y={gateFrom + 1} to="up" color={color} />
+      <Wire color={color} d={`M${gate.x} ${gate.y}V${control.top}`} />
+      <Arrow x={gate.x} y={gate.y + 1} to="up" color={color} />
       <Wire color={color} d={`M${load} ${top}H${out}V${middle}H${control.right}`} />
       <Junction x={load} y={top} color={color} />
       <Arrow x={control.right} y={middle} to="left" color={color} />

@@ -1,7 +1,7 @@
 import { useState } from 'react'
 import { StyleSheet, View } from 'react-native'
 import Svg, { G, Path } from 'react-native-svg'
-import { Lines } from './PowerDrawing'
+import { Lines } from './Lines'
 import { Capacitor, Earth, Junction, Resistor, STROKE, Wire } from './symbols'
 import { PlotText } from '@/components/plots/PlotText'
 import type { CompensatorPart, DesignDocument } from '@/converters/document'

@@ -3,7 +3,8 @@ import { Pressable, ScrollView, StyleSheet, View } from 'react-native'
 import Svg, { G } from 'react-native-svg'
 import { ControlDrawing } from './ControlDrawing'
 import { PowerDrawing } from './PowerDrawing'
-import { hitBoxes, type StagePart } from './stageParts'
+import { hitBoxes } from './hitBoxes'
+import type { StagePart } from './stageParts'
 import { stageLayout } from './stageLayout'
 import { TARGET } from '@/constants/theme'
 import type { DesignDocument } from '@/converters/document'
@@ -18,7 +19,7 @@ export interface StageSchematicProps {
 export function StageSchematic({ design, onPart }: StageSchematicProps) {
   const theme = useTheme()
   const [available, setAvailable] = useState(0)
-  const layout = stageLayout(available, design.outputCapacitors.length)
+  const layout = stageLayout(available, design)
   const isWider = layout.width > available
   return (
     <View onLayout={(event) => setAvailable(Math.floor(event.nativeEvent.layout.width))} style={styles.frame}>
@@ -49,9 +50,9 @@ export function StageSchematic({ design, onPart }: StageSchematicProps) {
                 />
               </G>
             </Svg>
-            {hitBoxes(design, layout).map(({ part, label, x, y, width, height }) => (
+            {hitBoxes(design, layout).map(({ key, part, label, x, y, width, height }) => (
               <Pressable
-                key={`${part.kind}${part.kind === 'bank' ? part.index : ''}`}
+                key={key}
                 role="button"
                 aria-label={`${label}. Change`}
                 onPress={() => onPart(part)}

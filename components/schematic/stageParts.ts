@@ -1,27 +1,40 @@
-/** The parts of a power stage: their values in short, and where they can be pressed. */
-import type { StageLayout } from './stageLayout'
-import type { Box } from '@/components/plots/layout'
+/** The parts of a power stage: what they are called, and their values in short. */
+import { isInverting, type StationName } from './ladders'
 import type { DesignDocument } from '@/converters/document'
 import { formatEntry } from '@/hooks/draft/entries'
 
 export type StagePart =
-  | { readonly kind: 'line' | 'switch' | 'rectifier' | 'inductor' | 'load' | 'modulator' | 'amplifier' }
+  | {
+      readonly kind:
+        | 'line'
+        | 'inputFilter'
+        | 'switch'
+        | 'rectifier'
+        | 'inductor'
+        | 'secondInductor'
+        | 'couplingCapacitor'
+        | 'transformer'
+        | 'load'
+        | 'modulator'
+        | 'amplifier'
+    }
   | { readonly kind: 'bank'; readonly index: number }
 
-/** What stands beside each part, a line each. */
+type Values = readonly string[]
+
+/** The line, the load, the banks and the way back: parts that every stage has. */
 export function partValues(design: DesignDocument) {
-  const { line, output, inductor, rectifier, modulator, amplifier, sense } = design
-  const drop = rectifier.forwardVoltage > 0 ? [formatEntry(rectifier.forwardVoltage, 'V')] : []
+  const { line, output, modulator, amplifier, sense, topology } = design
   return {
     line: [formatEntry(line.nominal, 'V'), `${short(line.minimum)}–${short(line.maximum)}`],
-    switch: [formatEntry(design.switch.onResistance, 'Ω')],
-    rectifier: [...drop, formatEntry(rectifier.onResistance, 'Ω')],
-    inductor: [formatEntry(inductor.inductance, 'H'), formatEntry(inductor.resistance, 'Ω')],
     banks: design.outputCapacitors.map((bank) => ({
       pieces: [...(bank.count > 1 ? [`${bank.count} ×`] : []), formatEntry(bank.capacitance, 'F')],
       esr: formatEntry(bank.esr, 'Ω'),
     })),
-    load: [formatEntry(output.voltage, 'V'), formatEntry(output.currentMaximum, 'A')],
+    load: [
+      `${isInverting(topology) ? '−' : ''}${formatEntry(output.voltage, 'V')}`,
+      formatEntry(output.currentMaximum, 'A'),
+    ],
     modulator:
       modulator.kind === 'voltage-mode'
         ? ['Voltage mode', `ramp ${formatEntry(modulator.rampAmplitude, 'V')}`]
@@ -33,10 +46,6 @@ export function partValues(design: DesignDocument) {
   }
 }
 
-function bankLines(bank: { readonly pieces: readonly string[]; readonly esr: string } | undefined): readonly string[] {
-  return bank ? [bank.pieces.join(' '), `ESR ${bank.esr}`] : []
-}
-
 const short = (volts: number) => formatEntry(volts, 'V').replace(' V', '')
 
 function amplifierName(amplifier: DesignDocument['amplifier']): string {
@@ -46,63 +55,82 @@ function amplifierName(amplifier: DesignDocument['amplifier']): string {
     case 'transconductance':
       return `Transconductance, ${formatEntry(amplifier.transconductance, 'S')}`
     case 'shunt-optocoupler':
-      return 'Shunt reference'
+      return `Shunt, optocoupler ${formatEntry(amplifier.currentTransferRatio, '%')}`
   }
 }
 
-export interface HitBox extends Box {
+export interface StationPart {
   readonly part: StagePart
-  readonly label: string
+  readonly name: string
+  /** Beside the part; of a branch, those of its capacitor. */
+  readonly lines: Values
+  /** Of a branch: those of its resistor. */
+  readonly lower?: Values
 }
 
-/** Areas to press, with the words that are read aloud for them. */
-export function hitBoxes(design: DesignDocument, layout: StageLayout): HitBox[] {
-  const { top, bottom, node, beforeNode, afterNode, source, banks, load, control, width } = layout
-  const values = partValues(design)
-  const upright = (x: number, right: number) => ({
-    x: x - 16,
-    y: top + 26,
-    width: right - x + 14,
-    height: bottom - top - 44,
-  })
-  const along = (x: number) => ({ x: x - 32, y: 2, width: 64, height: top + 10 })
-  const isBuck = design.topology !== 'boost'
-  const spot = {
-    switch: isBuck ? along(beforeNode) : upright(node, banks[0]! - 18),
-    inductor: isBuck ? along(afterNode) : along(beforeNode),
-    rectifier: isBuck ? upright(node, banks[0]! - 18) : along(afterNode),
-  }
-  const say = (name: string, lines: readonly string[]) => `${name}, ${lines.join(', ')}`
-  return [
-    { part: { kind: 'line' }, label: say('Line', values.line), ...upright(source, node - 20) },
-    { part: { kind: 'switch' }, label: say('Switch', values.switch), ...spot.switch },
-    { part: { kind: 'inductor' }, label: say('Inductor', values.inductor), ...spot.inductor },
-    { part: { kind: 'rectifier' }, label: say('Rectifier', values.rectifier), ...spot.rectifier },
-    ...banks.map((x, index) => ({
-      part: { kind: 'bank' as const, index },
-      label: say(`Output capacitors${banks.length > 1 ? `, bank ${index + 1}` : ''}`, bankLines(values.banks[index])),
-      ...upright(x, (banks[index + 1] ?? load) - 18),
-    })),
-    { part: { kind: 'load' }, label: say('Load', values.load), ...upright(load, width - 12) },
-    {
-      part: { kind: 'modulator' },
-      label: say('Modulator', values.modulator),
-      ...{
-        x: control.left,
-        y: control.top,
-        width: control.middle - control.left - 14,
-        height: control.bottom - control.top,
-      },
-    },
-    {
-      part: { kind: 'amplifier' },
-      label: say('Error amplifier', values.amplifier),
-      ...{
-        x: control.middle + 14,
-        y: control.top,
-        width: control.right - control.middle - 14,
-        height: control.bottom - control.top,
-      },
-    },
+const branch = (name: string, capacitance: number, resistance: number): StationPart => ({
+  part: { kind: 'inputFilter' },
+  name,
+  lines: [formatEntry(capacitance, 'F')],
+  lower: resistance > 0 ? [formatEntry(resistance, 'Ω')] : [],
+})
+
+/** What one rung of the ladder says and which entries it opens. */
+export function stationPart(design: DesignDocument, name: StationName): StationPart {
+  const { rectifier, secondInductor, couplingCapacitor, transformer, inputFilter, topology } = design
+  const coil = (part: { inductance: number; resistance: number }) => [
+    formatEntry(part.inductance, 'H'),
+    formatEntry(part.resistance, 'Ω'),
   ]
+  const drop = rectifier.forwardVoltage > 0 ? [formatEntry(rectifier.forwardVoltage, 'V')] : []
+  switch (name) {
+    case 'switch':
+      return { part: { kind: 'switch' }, name: 'Switch', lines: [formatEntry(design.switch.onResistance, 'Ω')] }
+    case 'rectifier':
+      return {
+        part: { kind: 'rectifier' },
+        name: topology === 'forward' ? 'Freewheeling rectifier' : 'Rectifier',
+        lines: [...drop, formatEntry(rectifier.onResistance, 'Ω')],
+      }
+    case 'forwardRectifier':
+      return { part: { kind: 'rectifier' }, name: 'Forward rectifier', lines: [] }
+    case 'inductor':
+      return {
+        part: { kind: 'inductor' },
+        name: secondInductor && hasTwoInductors(topology) ? 'First inductor' : 'Inductor',
+        lines: coil(design.inductor),
+      }
+    case 'secondInductor':
+      return {
+        part: { kind: 'secondInductor' },
+        name: 'Second inductor',
+        lines: secondInductor ? coil(secondInductor) : ['missing'],
+      }
+    case 'couplingCapacitor':
+      return {
+        part: { kind: 'couplingCapacitor' },
+        name: 'Coupling capacitor',
+        lines: couplingCapacitor
+          ? [formatEntry(couplingCapacitor.capacitance, 'F'), formatEntry(couplingCapacitor.esr, 'Ω')]
+          : ['missing'],
+      }
+    case 'transformer':
+      return {
+        part: { kind: 'transformer' },
+        name: 'Transformer',
+        lines: [transformer ? `1 : ${formatEntry(transformer.turnsRatio, '')}` : 'missing'],
+      }
+    case 'filterInductor':
+      return {
+        part: { kind: 'inputFilter' },
+        name: 'Input filter inductor',
+        lines: inputFilter ? coil(inputFilter) : [],
+      }
+    case 'filterCapacitor':
+      return branch('Input filter capacitor', inputFilter?.capacitance ?? 0, inputFilter?.esr ?? 0)
+    case 'dampingBranch':
+      return branch('Damping branch', inputFilter?.dampingCapacitance ?? 0, inputFilter?.dampingResistance ?? 0)
+  }
 }
+
+const hasTwoInductors = (topology: DesignDocument['topology']) => topology === 'sepic' || topology === 'cuk'

@@ -141,3 +141,49 @@ export function Arrow({
   const d = { left: 'l7 -4v8z', up: 'l-4 7h8z', down: 'l-4 -7h8z' }[to]
   return <Path d={`M${x} ${y}${d}`} fill={color} />
 }
+
+/**
+ * Windings of a transformer, one each side of the core, with the dots of their sense. `storesEnergy`: of opposite
+ * sense, the secondary's dot at its far end.
+ */
+export function Windings({
+  x,
+  primary,
+  secondary,
+  gap,
+  storesEnergy,
+  color,
+  ground,
+}: {
+  readonly x: number
+  /** Heights of the middles. */
+  readonly primary: number
+  readonly secondary: number
+  readonly gap: number
+  readonly storesEnergy: boolean
+  readonly color: string
+  readonly ground: string
+}) {
+  const winding = (at: number, middle: number, side: 1 | -1) => (
+    <G>
+      <Rect x={at - 3} y={middle - 20} width={6} height={40} fill={ground} />
+      <Path
+        d={`M${at} ${middle - 20}${`a5 5 0 0 ${side === 1 ? 1 : 0} 0 10`.repeat(4)}`}
+        stroke={color}
+        strokeWidth={STROKE}
+        fill="none"
+      />
+    </G>
+  )
+  const dot = secondary + (storesEnergy ? 24 : -24)
+  const core = Math.min(primary, secondary) - 22
+  return (
+    <G>
+      {winding(x - gap, primary, 1)}
+      {winding(x + gap, secondary, -1)}
+      <Path d={`M${x - 2} ${core}v44M${x + 2} ${core}v44`} stroke={color} strokeWidth={STROKE} fill="none" />
+      <Circle cx={x - gap + 6} cy={primary - 24} r={2.4} fill={color} />
+      <Circle cx={x + gap - 6} cy={dot} r={2.4} fill={color} />
+    </G>
+  )
+}

@@ -1,6 +1,17 @@
 import type { ReactNode } from 'react'
 import { AmplifierFields, ModulatorFields } from './ControlFields'
-import { BankFields, InductorFields, LineFields, LoadFields, RectifierFields, SwitchFields } from './groups'
+import {
+  BankFields,
+  CouplingCapacitorFields,
+  InductorFields,
+  LineFields,
+  LoadFields,
+  RectifierFields,
+  SecondInductorFields,
+  SwitchFields,
+  TransformerFields,
+} from './groups'
+import { InputFilterFields } from './InputFilterFields'
 import type { StagePart } from '@/components/schematic/stageParts'
 import { Sheet } from '@/components/ui/Sheet'
 
@@ -9,6 +20,10 @@ const SHEETS: Readonly<Record<Exclude<StagePart['kind'], 'bank'>, { title: strin
   switch: { title: 'Switch', content: <SwitchFields /> },
   rectifier: { title: 'Rectifier', content: <RectifierFields /> },
   inductor: { title: 'Inductor', content: <InductorFields /> },
+  secondInductor: { title: 'Second inductor', content: <SecondInductorFields /> },
+  couplingCapacitor: { title: 'Coupling capacitor', content: <CouplingCapacitorFields /> },
+  transformer: { title: 'Transformer', content: <TransformerFields /> },
+  inputFilter: { title: 'Input filter', content: <InputFilterFields /> },
   load: { title: 'Load', content: <LoadFields /> },
   modulator: { title: 'Modulator', content: <ModulatorFields /> },
   amplifier: { title: 'Error amplifier', content: <AmplifierFields /> },

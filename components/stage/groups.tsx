@@ -42,11 +42,43 @@ export function LoadFields() {
   )
 }
 
+/** The first or only inductor; of a flyback, what its transformer stores energy in. */
 export function InductorFields() {
+  const { topology } = useDraft().design
   return (
     <Fields>
-      <DraftField path="inductor.inductance" />
+      {topology === 'flyback' ? (
+        <DraftField path="inductor.inductance" label="Magnetising inductance" hint="Seen from the primary" />
+      ) : (
+        <DraftField path="inductor.inductance" />
+      )}
       <DraftField path="inductor.resistance" />
+    </Fields>
+  )
+}
+
+export function SecondInductorFields() {
+  return (
+    <Fields>
+      <DraftField path="secondInductor.inductance" />
+      <DraftField path="secondInductor.resistance" />
+    </Fields>
+  )
+}
+
+export function CouplingCapacitorFields() {
+  return (
+    <Fields>
+      <DraftField path="couplingCapacitor.capacitance" />
+      <DraftField path="couplingCapacitor.esr" />
+    </Fields>
+  )
+}
+
+export function TransformerFields() {
+  return (
+    <Fields>
+      <DraftField path="transformer.turnsRatio" />
     </Fields>
   )
 }

@@ -7,8 +7,8 @@ import {
   type QuickChoices,
   type QuickPath,
   type QuickTexts,
+  type QuickTopology,
 } from './quickStart'
-import { TopologyCards } from './TopologyCards'
 import { Fields } from '@/components/design/Fields'
 import { Button } from '@/components/ui/Button'
 import { Choice } from '@/components/ui/Choice'
@@ -20,14 +20,18 @@ import { problemsByPath } from '@/hooks/api'
 import { useStageProposalMutation } from '@/hooks/queries/stageProposals'
 import type { StageProposal } from '@/server/contract/stageProposals'
 
-/** Four lines of figures in, a whole power stage out. */
-export function QuickStartForm({ onProposal }: { readonly onProposal: (proposal: StageProposal | null) => void }) {
-  const [choices, setChoices] = useState<QuickChoices>({
-    topology: 'buck',
-    controlScheme: 'voltage-mode',
-    rectifier: 'synchronous',
-  })
-  const [texts, setTexts] = useState<QuickTexts>(BEGINNINGS.buck)
+export interface QuickStartFormProps {
+  readonly topology: QuickTopology
+  readonly controlScheme: QuickChoices['controlScheme']
+  readonly onProposal: (proposal: StageProposal | null) => void
+}
+
+/** A few lines of figures in, a whole power stage out. */
+export function QuickStartForm({ topology, controlScheme, onProposal }: QuickStartFormProps) {
+  const [rectifier, setRectifier] = useState<QuickChoices['rectifier']>('synchronous')
+  const [typed, setTyped] = useState<QuickTexts | null>(null)
+  // Figures that nobody touched follow the topology; typed ones stay.
+  const texts = typed ?? BEGINNINGS[topology]
   const [problems, setProblems] = useState<Readonly<Partial<Record<QuickPath, string>>>>({})
   const proposal = useStageProposalMutation()
   const refused: Readonly<Record<string, string>> = problemsByPath(proposal.error)
@@ -38,42 +42,26 @@ export function QuickStartForm({ onProposal }: { readonly onProposal: (proposal:
     proposal.reset()
     onProposal(null)
   }
-  const choose = (change: Partial<QuickChoices>) => {
-    // Figures that nobody touched follow the topology; typed ones stay.
-    const untouched = QUICK_FIELDS.every(({ path }) => texts[path] === BEGINNINGS[choices.topology][path])
-    if (change.topology && untouched) setTexts(BEGINNINGS[change.topology])
-    setChoices({ ...choices, ...change })
-    clear()
-  }
   const submit = () => {
-    const read = readQuickStart(texts, choices)
+    const read = readQuickStart(texts, { topology, controlScheme, rectifier })
     if (read.kind === 'problems') return setProblems(read.problems)
     setProblems({})
     proposal.mutate(read.requirements, { onSuccess: onProposal })
   }
   return (
     <View style={styles.form}>
-      <TopologyCards value={choices.topology} onChange={(topology) => choose({ topology })} />
-      <View style={styles.choices}>
-        <Choice
-          label="Control"
-          value={choices.controlScheme}
-          options={[
-            { value: 'voltage-mode', label: 'Voltage mode' },
-            { value: 'peak-current-mode', label: 'Peak current mode' },
-          ]}
-          onChange={(controlScheme) => choose({ controlScheme })}
-        />
-        <Choice
-          label="Rectifier"
-          value={choices.rectifier}
-          options={[
-            { value: 'synchronous', label: 'Synchronous' },
-            { value: 'diode', label: 'Diode' },
-          ]}
-          onChange={(rectifier) => choose({ rectifier })}
-        />
-      </View>
+      <Choice
+        label="Rectifier"
+        value={rectifier}
+        options={[
+          { value: 'synchronous', label: 'Synchronous' },
+          { value: 'diode', label: 'Diode' },
+        ]}
+        onChange={(kind) => {
+          setRectifier(kind)
+          clear()
+        }}
+      />
       <Fields>
         {QUICK_FIELDS.map(({ path, label }) => (
           <Field
@@ -82,7 +70,7 @@ export function QuickStartForm({ onProposal }: { readonly onProposal: (proposal:
             value={texts[path]}
             error={problems[path] ?? refused[path]}
             onChangeText={(text) => {
-              setTexts({ ...texts, [path]: text })
+              setTyped({ ...texts, [path]: text })
               clear()
             }}
             onSubmit={submit}
@@ -108,6 +96,5 @@ export function QuickStartForm({ onProposal }: { readonly onProposal: (proposal:
 
 const styles = StyleSheet.create({
   form: { gap: space.lg },
-  choices: { flexDirection: 'row', flexWrap: 'wrap', columnGap: space.xl, rowGap: space.md },
   left: { alignSelf: 'flex-start' },
 })

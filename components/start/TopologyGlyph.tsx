@@ -1,11 +1,20 @@
 import Svg, { G } from 'react-native-svg'
-import { Capacitor, Diode, Inductor, Junction, Transistor, Wire } from '@/components/schematic/symbols'
-import type { DrawnTopology } from '@/components/schematic/stageLayout'
+import { LADDERS } from '@/components/schematic/ladders'
+import { placeLadder, WINDING_GAP, type Rungs } from '@/components/schematic/stageLayout'
+import { StationDrawing } from '@/components/schematic/StationDrawing'
+import { Capacitor, Junction, Wire } from '@/components/schematic/symbols'
+import type { Topology } from '@/converters/document'
 
 const WIDTH = 200
 const HEIGHT = 92
-const TOP = 34
-const BOTTOM = 80
+const TOP = 26
+const BOTTOM = 82
+const START = 10
+const END = 190
+const MIDDLE = (TOP + BOTTOM) / 2
+const RUNGS: Rungs = { along: 46, narrow: 34, first: 46, across: 30, windings: 40 }
+/** From the ladder's last node to the capacitor's, where nothing lies between, and to the edge. */
+const TAIL = 28
 
 /** The bare circuit, for a card. */
 export function TopologyGlyph({
@@ -13,32 +22,39 @@ export function TopologyGlyph({
   color,
   ground,
 }: {
-  readonly topology: DrawnTopology
+  readonly topology: Topology
   readonly color: string
   readonly ground: string
 }) {
   const ink = { color, ground }
+  const ladder = placeLadder(LADDERS[topology], RUNGS, 0)
+  const stretch = (END - START - TAIL) / ladder.end
+  const at = (x: number) => START + x * stretch
+  const out = at(ladder.end)
+  const parting = ladder.placed.find(({ station }) => station.stands === 'between')
+  const rails = parting
+    ? `M${START} ${TOP}H${at(parting.x) - WINDING_GAP}M${at(parting.x) + WINDING_GAP} ${TOP}H${END}M${START} ${BOTTOM}H${at(parting.x) - WINDING_GAP}M${at(parting.x) + WINDING_GAP} ${BOTTOM}H${END}`
+    : `M${START} ${TOP}H${END}M${START} ${BOTTOM}H${END}`
+  const nodes = [...ladder.placed.filter(({ station }) => station.stands === 'across').map(({ x }) => at(x)), out]
   return (
     <Svg width={WIDTH} height={HEIGHT} aria-hidden>
       <G>
-        <Wire color={color} d={`M10 ${TOP}H190M10 ${BOTTOM}H190M${NODE} ${TOP}V${BOTTOM}M${OUT} ${TOP}V${BOTTOM}`} />
-        <Capacitor x={OUT} y={57} isVertical {...ink} />
-        {topology === 'buck' ? (
-          <>
-            <Transistor x={46} y={TOP} {...ink} />
-            <G transform={`rotate(180 ${NODE} 57)`}>
-              <Diode x={NODE} y={57} isVertical {...ink} />
-            </G>
-            <Inductor x={122} y={TOP} {...ink} />
-          </>
-        ) : (
-          <>
-            <Inductor x={46} y={TOP} {...ink} />
-            <Transistor x={NODE} y={57} isVertical {...ink} />
-            <Diode x={122} y={TOP} {...ink} />
-          </>
-        )}
-        {[NODE, OUT].map((x) => (
+        <Wire color={color} d={`${rails}M${out} ${TOP}V${BOTTOM}`} />
+        {ladder.placed.map(({ station, x }) => (
+          <StationDrawing
+            key={station.name}
+            station={station}
+            x={at(x)}
+            top={TOP}
+            bottom={BOTTOM}
+            gap={WINDING_GAP}
+            isSynchronous={false}
+            winding={{ upper: TOP + 12, below: BOTTOM - 13 }}
+            {...ink}
+          />
+        ))}
+        <Capacitor x={out} y={MIDDLE} isVertical {...ink} />
+        {nodes.map((x) => (
           <G key={x}>
             <Junction x={x} y={TOP} color={color} />
             <Junction x={x} y={BOTTOM} color={color} />
@@ -48,6 +64,3 @@ export function TopologyGlyph({
     </Svg>
   )
 }
-
-const NODE = 84
-const OUT = 162

@@ -1,8 +1,10 @@
 /** The quick start's form: text as typed, read into what the server asks for. */
-import type { DrawnTopology } from '@/components/schematic/stageLayout'
+import type { Topology } from '@/converters/document'
 import { parseQuantity, type Unit } from '@/converters/quantities'
 import type { StageProposalRequestInput } from '@/server/contract/stageProposals'
 
+/** The topologies that the quick start knows. */
+export type QuickTopology = Extract<Topology, 'buck' | 'boost'>
 export type Requirements = StageProposalRequestInput['requirements']
 
 export const QUICK_FIELDS = [
@@ -19,7 +21,7 @@ export type QuickPath = (typeof QUICK_FIELDS)[number]['path']
 export type QuickTexts = Readonly<Record<QuickPath, string>>
 
 /** What the form begins with: a rail of the kind that each topology is chosen for. */
-export const BEGINNINGS: Readonly<Record<DrawnTopology, QuickTexts>> = {
+export const BEGINNINGS: Readonly<Record<QuickTopology, QuickTexts>> = {
   buck: {
     'line.minimum': '9 V',
     'line.nominal': '12 V',
@@ -41,7 +43,7 @@ export const BEGINNINGS: Readonly<Record<DrawnTopology, QuickTexts>> = {
 }
 
 export interface QuickChoices {
-  readonly topology: DrawnTopology
+  readonly topology: QuickTopology
   readonly controlScheme: Requirements['controlScheme']
   readonly rectifier: 'synchronous' | 'diode'
 }
