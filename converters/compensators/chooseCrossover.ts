@@ -110,8 +110,11 @@ function whyNothing(request: ChoiceRequest): string {
   return `${none} Type ${found} at ${hertz(unlimited.goal.omega / TAU)} would, but with parts outside the size limits: ${needs}. Allow them, or change the upper divider resistor or the ramp.`
 }
 
+/** What the two methods need to know. */
+export type MethodsRequest = Pick<ChoiceRequest, 'plants' | 'upperResistance' | 'type' | 'size'>
+
 /** Both methods at one crossover, the better first: a K-factor network that holds, or the one with more slack. */
-function bothMethods(request: ChoiceRequest, goal: Goal): [Attempt, ...Attempt[]] | null {
+export function bothMethods(request: MethodsRequest, goal: Goal): [Attempt, ...Attempt[]] | null {
   const { plants, upperResistance, type, size } = request
   const found = attemptKFactor({ plants, upperResistance, goal, type })
   if (!found) return null

@@ -4,7 +4,7 @@
  */
 import type { CompensatorType } from '../document'
 import { minimise } from '../numeric/nelderMead'
-import { tried, type Attempt, type AttemptRequest } from './attempts'
+import { goalAt, holds, tried, type Attempt, type AttemptRequest, type Goal } from './attempts'
 import type { CornerPlants } from './cornerPlants'
 import { placementOf, placeNetwork, type Placement, type Synthesis } from './placement'
 
@@ -18,6 +18,7 @@ const STEP = 0.4
 /** What a decibel short of the gain margin counts, in degrees of phase margin. */
 const DEGREES_PER_DECIBEL = 6
 const UNUSABLE = 1e6
+const BISECTIONS = 5
 
 /** The optimised network at the goal's crossover, or null where the type has nothing to move. */
 export function attemptOptimised(request: AttemptRequest, starts: readonly Attempt[]): Attempt | null {
@@ -38,6 +39,30 @@ export function attemptOptimised(request: AttemptRequest, starts: readonly Attem
     const { x } = minimise(cost, logarithmsOf(placement), STEP, EVALUATIONS[start.ideal.type])
     const found = tried(plants, goal, 'optimised', synthesise(x))
     if (found && (best === null || merit(plants, found) > merit(plants, best))) best = found
+  }
+  return best
+}
+
+/**
+ * The optimised network at the highest crossover at which every corner still holds and stays within the window, by
+ * bisection between one that holds and the window's upper end. Null where none is above the first.
+ * @param attemptsAt - networks of the other methods for a goal, to start from.
+ */
+export function attemptFastest(
+  request: AttemptRequest,
+  upper: number, // rad/s
+  attemptsAt: (goal: Goal) => readonly Attempt[],
+): Attempt | null {
+  let low = request.goal.omega
+  let high = upper
+  let best: Attempt | null = null
+  for (let step = 0; step < BISECTIONS; step++) {
+    const goal = goalAt(request.plants, Math.sqrt(low * high))
+    const found = attemptOptimised({ ...request, goal }, attemptsAt(goal))
+    if (found && holds(found) && found.highestCrossover <= upper) {
+      best = found
+      low = goal.omega
+    } else high = goal.omega
   }
   return best
 }

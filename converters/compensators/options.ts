@@ -9,6 +9,9 @@ export type PreferredSeries = (typeof PREFERRED_SERIES)[number]
 /** The method by which a network was found. */
 export const SYNTHESIS_METHODS = ['k-factor', 'placed', 'optimised'] as const
 
+/** What the optimiser is after: the most margin at the crossover, or the highest crossover at which every corner holds. */
+export const OPTIMISER_AIMS = ['margin', 'crossover'] as const
+
 const LONGEST_VALUE_LIST = 2000
 const ohms = z.number({ error: 'Give a number in Ω.' }).positive({ error: 'Must be greater than zero.' }).max(1e9)
 const farads = z.number({ error: 'Give a number in F.' }).positive({ error: 'Must be greater than zero.' }).max(1)
@@ -56,6 +59,8 @@ export const CompensatorOptions = z.object({
       poles: z.array(hertz).max(2, { error: 'Must be at most 2 poles.' }),
     })
     .optional(),
+  /** Left aside when a crossover is given. */
+  aim: z.enum(OPTIMISER_AIMS, { error: `Must be one of ${OPTIMISER_AIMS.join(', ')}.` }).default('margin'),
   resistorSeries: series.default('E96'),
   capacitorSeries: series.default('E12'),
   /** Values in stock, Ω and F; they replace the series. */

@@ -12,11 +12,11 @@ import { formatQuantity } from '../quantities'
 import { closedLoopMap } from '../simulation/closedOrbit'
 import type { CompensatorProposals, Proposal } from '../results'
 import { boostFor, goalAt, type Attempt, type AttemptRequest, type Goal } from './attempts'
-import { chooseCrossover, type Choice } from './chooseCrossover'
+import { bothMethods, chooseCrossover, type Choice } from './chooseCrossover'
 import { readCorners, summariseCorners } from './cornerMargins'
 import { openCorners, type CornerPlants } from './cornerPlants'
 import { buildNetwork, networkRoots, networkStateSpace, type Network } from './networks'
-import { attemptOptimised } from './optimised'
+import { attemptFastest, attemptOptimised } from './optimised'
 import { CompensatorOptions, type CompensatorOptionsInput } from './options'
 import { pairRoots, placeNetwork } from './placement'
 import { marginSlack, quickMargins } from './quickMargins'
@@ -57,22 +57,31 @@ export function proposeCompensator(design: unknown, options: CompensatorOptionsI
       ? { kind: 'choice', attempts: [byHand(goalAt(plants, 2 * Math.PI * wanted))], how: 'wanted' }
       : chooseCrossover({ plants, window, upperResistance, wanted, type, limits, size })
   if (choice.kind === 'refusal') return refused(choice.message)
-  const { goal, ideal } = choice.attempts[0]
+  const { goal } = choice.attempts[0]
   const attempts = placement
     ? [byHand(goal)]
     : withOptimised({ plants, upperResistance, goal, type }, choice.attempts, size)
-  const evaluated = attempts.map((attempt) =>
+  const fastest =
+    checked.aim === 'crossover' && choice.how === 'highest'
+      ? attemptFastest(
+          { plants, upperResistance, goal, type },
+          2 * Math.PI * window.upper,
+          (other) => bothMethods({ plants, upperResistance, type, size }, other) ?? [],
+        )
+      : null
+  const first = fastest ? size(fastest) : choice.attempts[0]
+  const evaluated = [...(fastest ? [first] : []), ...attempts].map((attempt) =>
     evaluate(plants, attempt, { stock, options: checked, window, byHand: placement !== undefined }),
   )
   return {
     window,
     suggestion: {
-      crossover: goal.omega / (2 * Math.PI),
-      type: ideal.type,
-      phaseBoost: boostFor(goal, document.targets.phaseMargin),
-      reasons: suggestionReasons(plants, window, choice, type !== null),
+      crossover: first.goal.omega / (2 * Math.PI),
+      type: first.ideal.type,
+      phaseBoost: boostFor(first.goal, document.targets.phaseMargin),
+      reasons: suggestionReasons(plants, window, { ...choice, attempts: [first] }, type !== null),
     },
-    proposals: explainedGain(evaluated).sort(byMerit(document, goal.omega / (2 * Math.PI))),
+    proposals: explainedGain(evaluated).sort(byMerit(document, first.goal.omega / (2 * Math.PI))),
     refusal: null,
   }
 }
@@ -177,8 +186,9 @@ function switchingShortfall({ corners }: CornerPlants, network: Network): string
 /** Says so where moving zeros and poles brings next to nothing over the K factor. */
 function explainedGain(proposals: readonly Proposal[]): Proposal[] {
   const worst = (proposal: Proposal | undefined) => proposal?.margins.ideal.worst.phaseMargin ?? null
-  const byFactor = worst(proposals.find(({ method }) => method === 'k-factor'))
   return proposals.map((proposal) => {
+    const { crossover } = proposal
+    const byFactor = worst(proposals.find((other) => other.method === 'k-factor' && other.crossover === crossover))
     const own = worst(proposal)
     if (proposal.method !== 'optimised' || own === null || byFactor === null || own >= byFactor + LITTLE_GAIN)
       return proposal

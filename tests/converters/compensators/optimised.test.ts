@@ -41,4 +41,20 @@ describe('the optimised network', () => {
     expect(optimised.reasons.join(' ')).toMatch(/Nelder and Mead/)
     expect(optimised.loadStepDip).toBeLessThan(0)
   })
+
+  it('asked for the highest crossover, goes beyond the other methods and still holds at every corner', () => {
+    // A right-half-plane zero far up leaves the phase, not the window, to bound the crossover.
+    const design = buckDesign({
+      compensator: null,
+      amplifier: { kind: 'op-amp', gainBandwidth: 60e6, openLoopGain: 1e4 },
+    })
+    const usual = proposeCompensator(design)
+    const fast = proposeCompensator(design, { aim: 'crossover' })
+    expect(fast.suggestion!.crossover).toBeGreaterThanOrEqual(usual.suggestion!.crossover)
+    const [best] = fast.proposals
+    expect(best!.margins.ideal.worst.phaseMargin!).toBeGreaterThan(55)
+    expect(best!.margins.ideal.worst.isStable).toBe(true)
+    const asked = proposeCompensator(design, { aim: 'crossover', crossover: 30e3 })
+    expect(asked.suggestion!.crossover).toBe(30e3)
+  })
 })
