@@ -20,7 +20,7 @@ function withOutputVoltage(text: string): string {
   return body.replace('"voltage":3.3', `"voltage":${text}`)
 }
 
-const COMPUTE_PATHS = ['/analyses', '/corners', '/compensators'] as const
+const COMPUTE_PATHS = ['/analyses', '/corners', '/compensators', '/tolerance-corners'] as const
 
 describe.each(COMPUTE_PATHS)('POST %s', (path) => {
   it.each([
@@ -158,6 +158,12 @@ it('names bad wizard options by their path', async () => {
   const options = { crossover: -1, resistorSeries: 'E13' }
   const problem = await readProblem(await server.post('/compensators', { design: buckDesign(), options }), 400)
   expect(fieldsOf(problem)).toEqual(['options.crossover', 'options.resistorSeries'])
+})
+
+it('names bad options of the corners over tolerances by their path', async () => {
+  const options = { mostCorners: 1_000, vary: ['weather'], conditions: { ageing: { esrFactor: -1 } } }
+  const problem = await readProblem(await server.post('/tolerance-corners', { design: buckDesign(), options }), 400)
+  expect(fieldsOf(problem)).toEqual(['options.conditions.ageing.esrFactor', 'options.mostCorners', 'options.vary.0'])
 })
 
 it('names bad quick-start figures by their path', async () => {

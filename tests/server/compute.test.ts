@@ -116,7 +116,14 @@ describe('the samples', () => {
     const { samples } = SampleList.parse(await (await fetch(`${server.origin}/api/v1/samples`)).json())
     const kinds = samples.map(({ topology, control }) => `${topology} ${control}`)
     expect(new Set(kinds)).toEqual(
-      new Set(['buck voltage-mode', 'buck peak-current-mode', 'boost voltage-mode', 'boost peak-current-mode']),
+      new Set([
+        'buck voltage-mode',
+        'buck peak-current-mode',
+        'boost voltage-mode',
+        'boost peak-current-mode',
+        'flyback peak-current-mode',
+        'sepic peak-current-mode',
+      ]),
     )
     for (const { slug, summary } of samples) {
       expect(summary).toContain('Invented')

@@ -1,11 +1,14 @@
 import { describe, expect, expectTypeOf, it } from 'vitest'
 
 import type * as engine from '@/converters/results'
+import type * as spread from '@/converters/spread/results'
 import { Analysis, AnalysisRequest } from '@/server/contract/analyses'
 import { check } from '@/server/contract/checking'
 import type { CompensatorProposals } from '@/server/contract/compensators'
 import type { CornerSet } from '@/server/contract/corners'
+import type { SpreadResult } from '@/server/contract/spreadRuns'
 import type { StageProposal } from '@/server/contract/stageProposals'
+import type { ToleranceCornerSet } from '@/server/contract/toleranceCorners'
 import { buckDesign } from '@/tests/support/designs'
 
 describe('the contract', () => {
@@ -19,6 +22,10 @@ describe('the contract', () => {
     expectTypeOf<CompensatorProposals>().toExtend<engine.CompensatorProposals>()
     expectTypeOf<engine.StageChoice>().toExtend<StageProposal['choices'][number]>()
     expectTypeOf<StageProposal['choices'][number]>().toExtend<engine.StageChoice>()
+    expectTypeOf<spread.SpreadResult>().toExtend<SpreadResult>()
+    expectTypeOf<SpreadResult>().toExtend<spread.SpreadResult>()
+    expectTypeOf<spread.ToleranceCornerSet>().toExtend<ToleranceCornerSet>()
+    expectTypeOf<ToleranceCornerSet>().toExtend<spread.ToleranceCornerSet>()
     expect(Analysis.shape.margins.parse(null)).toBeNull()
   })
 })

@@ -1,128 +1,157 @@
-import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest'
+import { pino } from 'pino'
+import { afterAll, afterEach, beforeAll, describe, expect, it, vi } from 'vitest'
 
 import { insertSpreadRun } from '@/db/queries/spreadRuns'
-import { pino } from 'pino'
-import { SpreadRun } from '@/server/contract/spreadRuns'
-import { ToleranceCornerSet } from '@/server/contract/toleranceCorners'
-import { Simulation } from '@/server/contract/simulations'
-import { RootLocus } from '@/server/contract/rootLoci'
 import { sweepSpreadRuns } from '@/server/services/spreadRuns/sweep'
 import { buckDesign } from '@/tests/support/designs'
+import { fieldsOf, readProblem } from '@/tests/support/problems'
 import { startTestServer, type TestServer } from '@/tests/support/server'
+import { askForRun, beginRun, cancelRun, endOfRun, LONG, readRun, runOnce, runUrl } from '@/tests/support/spreadRuns'
 
 let server: TestServer
 beforeAll(async () => {
   server = await startTestServer({ compute: { threads: 2 } })
 })
 afterAll(() => server.stop())
+afterEach(() => nothingLeft())
 
-const path = (id: string) => `${server.origin}/api/v1/spread-runs/${id}`
-const read = async (id: string) => SpreadRun.parse(await (await fetch(path(id))).json())
-const begin = async (options: Record<string, unknown>) => {
-  const response = await server.post('/spread-runs', { design: buckDesign(), options })
-  expect(response.status).toBe(202)
-  const run = SpreadRun.parse(await response.json())
-  expect(response.headers.get('location')).toBe(`/api/v1/spread-runs/${run.id}`)
-  return run
-}
-const until = (id: string, isWanted: (run: SpreadRun) => boolean) =>
-  vi.waitFor(
-    async () => {
-      const run = await read(id)
-      expect(isWanted(run), `${run.state} ${run.progress}`).toBe(true)
-      return run
-    },
-    { timeout: 25_000, interval: 50 },
-  )
-/** Long enough to be met while it runs. */
-const LONG = { samples: 10_000, model: 'switched' }
+/** Threads and places are free again. */
+const nothingLeft = () =>
+  vi.waitFor(() => expect(server.spreadRunner.underWay()).toEqual([]), { timeout: 10_000, interval: 20 })
 
 describe('a statistical run', () => {
-  it('ends with a result that any page can read again', async () => {
-    const { id } = await begin({ samples: 1000, seed: 7 })
-    const done = await until(id, ({ state }) => state === 'done')
-    expect(done.progress).toBe(1)
+  it('is taken in at once and ends with a result that any page can read again', async () => {
+    const { id, ...taken } = await beginRun(server, { samples: 1000, seed: 7 })
+    expect(taken).toMatchObject({ state: 'queued', progress: 0, evaluations: { done: 0, total: 1000 }, result: null })
+    const done = await endOfRun(server, id)
+    expect(done).toMatchObject({ state: 'done', progress: 1, problem: null })
     expect(done.result!.samples).toBe(1000)
     const { all } = done.result!.yields
     expect(all.lower).toBeLessThanOrEqual(all.share)
     expect(all.upper).toBeGreaterThanOrEqual(all.share)
-    expect(await read(id)).toEqual(done)
-    const again = await begin({ samples: 1000, seed: 7 })
-    expect((await until(again.id, ({ state }) => state === 'done')).result).toEqual(done.result)
+    expect(await readRun(server, id)).toEqual(done)
   })
 
-  it('moves on, leaves others their answers, and stops when it is cancelled', async () => {
-    const { id } = await begin(LONG)
-    await until(id, ({ progress }) => progress > 0 && progress < 1)
-    const asked = performance.now()
+  it('has the same answer to the same question, also where it is done in several blocks', async () => {
+    const options = { samples: 2500, seed: 7 }
+    const [first, second] = await Promise.all([beginRun(server, options), beginRun(server, options)])
+    expect(first.id).not.toBe(second.id)
+    const { result } = await endOfRun(server, first.id)
+    expect(result!.samples).toBe(2500)
+    expect((await endOfRun(server, second.id)).result).toEqual(result)
+  })
+
+  it("counts the evaluations of the Sobol' indices among its work", async () => {
+    const { id, evaluations } = await beginRun(server, { samples: 100, sobolSamples: 50, vary: ['inductance', 'esr'] })
+    expect(evaluations.total).toBe(100 + 50 * (2 + 2))
+    const { result } = await endOfRun(server, id)
+    expect(result!.sobol.map(({ figure }) => figure)).toContain('phaseMargin')
+  })
+
+  it('moves on, tells what it has so far, and stops when it is cancelled', async () => {
+    const { id } = await beginRun(server, LONG)
+    const early = await runOnce(server, id, ({ interim, progress }) => interim !== null && progress > 0)
+    expect(early).toMatchObject({ state: 'running', finishedAt: null, result: null })
+    expect(early.interim!.samples).toBeGreaterThan(0)
+    expect(early.interim!.distributions.phaseMargin!.count).toBeLessThanOrEqual(early.interim!.samples)
+    const later = await runOnce(server, id, ({ progress }) => progress > early.progress)
+    expect(later.progress).toBeLessThan(1)
+
+    const cancelled = await cancelRun(server, id)
+    expect(cancelled).toMatchObject({ state: 'cancelled', result: null })
+    await nothingLeft()
+    expect(await readRun(server, id)).toEqual(cancelled)
+    expect(await cancelRun(server, id)).toEqual(cancelled)
+  })
+
+  it('stays done when it is cancelled afterwards', async () => {
+    const { id } = await beginRun(server, { samples: 100 })
+    const done = await endOfRun(server, id)
+    expect(await cancelRun(server, id)).toEqual(done)
+  })
+
+  it('leaves others their answers', async () => {
+    const { id } = await beginRun(server, LONG)
+    await runOnce(server, id, ({ state }) => state === 'running')
     expect((await server.post('/analyses', { design: buckDesign() })).status).toBe(200)
-    expect(performance.now() - asked).toBeLessThan(2000)
-    const cancelled = SpreadRun.parse(await (await fetch(path(id), { method: 'DELETE' })).json())
-    expect(cancelled.state).toBe('cancelled')
-    await vi.waitFor(() => expect(server.spreadRunner.underWay()).not.toContain(id), { timeout: 10_000 })
-    const later = await read(id)
-    expect(later).toMatchObject({ state: 'cancelled', result: null, progress: cancelled.progress })
-    // Once more changes nothing.
-    expect((await fetch(path(id), { method: 'DELETE' })).status).toBe(200)
+    expect((await readRun(server, id)).state).toBe('running')
+    await cancelRun(server, id)
   })
 
-  it('is not found under an id that is not one, or is nobody’s', async () => {
-    for (const id of ['7', '00000000-0000-4000-8000-000000000000']) {
-      for (const method of ['GET', 'DELETE']) expect((await fetch(path(id), { method })).status).toBe(404)
-    }
+  it.each(['7', '00000000-0000-4000-8000-000000000000', "x'; drop table spread_runs; --"])(
+    'is not found under %s, an id of nobody',
+    async (id) => {
+      for (const method of ['GET', 'DELETE']) {
+        const problem = await readProblem(await fetch(runUrl(server, encodeURIComponent(id)), { method }), 404)
+        expect(problem.detail).toBe('There is no such run; runs are kept for a day.')
+      }
+    },
+  )
+})
+
+describe('a run that cannot be', () => {
+  it.each([
+    [{ samples: 10_001 }, ['options.samples']],
+    [{ sobolSamples: 10_001 }, ['options.sobolSamples']],
+    [{ samples: 10 }, ['options.samples']],
+    [{ samples: '1e400' }, ['options.samples']],
+    [{ samples: 1000.5, seed: -1 }, ['options.samples', 'options.seed']],
+    [{ distribution: 'lucky', model: 'best' }, ['options.distribution', 'options.model']],
+    [{ vary: [] }, ['options.vary']],
+    [{ measured: { esr: [0.1, 'more'] } }, ['options.measured.esr.1']],
+    ['many', ['options']],
+  ])('is refused at its fields: %j', async (options, fields) => {
+    const problem = await readProblem(await askForRun(server, options), 400)
+    expect(fieldsOf(problem)).toEqual(fields)
+    for (const { message } of problem.errors!) expect(message).toMatch(/^[A-Z].*\.$/)
   })
 
-  it('that an earlier process left unfinished is failed in words', async () => {
-    const id = crypto.randomUUID()
-    const expiresAt = new Date(Date.now() + 60_000)
-    await insertSpreadRun(server.db, { id, evaluationsTotal: 100, request: {}, expiresAt })
-    await sweepSpreadRuns({ db: server.db, runner: server.spreadRunner, logger: pino({ level: 'silent' }) })
-    const run = await read(id)
-    expect(run.state).toBe('failed')
-    expect(run.problem!.detail).toMatch(/restarted while this ran; start it again/)
+  it('says plainly how many samples there may be', async () => {
+    const problem = await readProblem(await askForRun(server, { samples: 20_000 }), 400)
+    expect(problem.detail).toBe('options.samples: At most 10000 samples can be run here.')
   })
 
   it.each([
-    [{ samples: 20_000 }, 'options.samples', /10000/],
-    [{ samples: 10 }, 'options.samples', /at least 100/],
-    [{ samples: '1e400' }, 'options.samples', /whole number/],
-    [{ distribution: 'lucky' }, 'options.distribution', /normal, uniform/],
-    [{ vary: [] }, 'options.vary', /Something has to vary/],
-  ])('refuses %j at its field', async (options, field, words) => {
-    const response = await server.post('/spread-runs', { design: buckDesign(), options })
-    expect(response.status).toBe(400)
-    const problem = (await response.json()) as { errors: { field: string; message: string }[] }
-    const found = problem.errors.find((error) => error.field === field)
-    expect(found?.message).toMatch(words)
-  })
-
-  it('of one address there are at most two at once; a third is told so', async () => {
-    const first = await begin(LONG)
-    const second = await begin(LONG)
-    const third = await server.post('/spread-runs', { design: buckDesign(), options: LONG })
-    expect(third.status).toBe(429)
-    for (const { id } of [first, second]) await fetch(path(id), { method: 'DELETE' })
-    await vi.waitFor(() => expect(server.spreadRunner.underWay()).toEqual([]), { timeout: 10_000 })
+    ['has no network', buckDesign({ compensator: null }), 'design.compensator'],
+    [
+      'has an output above its line',
+      buckDesign({ output: { voltage: 24, currentMinimum: 0.5, currentMaximum: 8 } }),
+      'design.output.voltage',
+    ],
+  ])('is refused before it begins when the design %s', async (_what, design, field) => {
+    const problem = await readProblem(await askForRun(server, {}, design), 422)
+    expect(fieldsOf(problem)).toEqual([field])
   })
 })
 
-describe('what else the spread is made of', () => {
-  it('corners over the tolerances, nominal first and the worst named', async () => {
-    const response = await server.post('/tolerance-corners', { design: buckDesign(), options: { mostCorners: 64 } })
-    const set = ToleranceCornerSet.parse(await response.json())
-    expect(set.corners.length).toBeGreaterThan(6)
-    expect(set.worst!.slack).toBe(Math.min(...set.corners.map(({ slack }) => slack)))
+describe('the sweep', () => {
+  const sweep = () => sweepSpreadRuns({ db: server.db, runner: server.spreadRunner, logger: pino({ level: 'silent' }) })
+  const insert = async (expiresInMs: number) => {
+    const id = crypto.randomUUID()
+    const expiresAt = new Date(Date.now() + expiresInMs)
+    await insertSpreadRun(server.db, { id, evaluationsTotal: 100, request: {}, expiresAt })
+    return id
+  }
+
+  it('fails what an earlier process has left, and leaves alone what is under way', async () => {
+    const { id } = await beginRun(server, LONG)
+    const left = await insert(60_000)
+    await sweep()
+    const failed = await readRun(server, left)
+    expect(failed.state).toBe('failed')
+    expect(failed.problem!.detail).toBe('The server was restarted while this ran; start it again.')
+    expect(['queued', 'running']).toContain((await readRun(server, id)).state)
+    await cancelRun(server, id)
   })
 
-  it('the closed loop cycle by cycle, and its root locus', async () => {
-    const simulation = await server.post('/simulations', {
-      design: buckDesign(),
-      options: { scenario: { kind: 'load-step' } },
-    })
-    expect(Simulation.parse(await simulation.json()).readings.peakDeviation).toBeLessThan(0)
-    const locus = RootLocus.parse(await (await server.post('/root-loci', { design: buckDesign() })).json())
-    expect(locus.gainsDb[locus.present]).toBe(0)
-    const bad = await server.post('/simulations', { design: buckDesign(), options: { cycles: 3 } })
-    expect(bad.status).toBe(400)
+  it('removes what has expired, which nobody is told of even before', async () => {
+    const expired = await insert(-1)
+    await readProblem(await fetch(runUrl(server, expired)), 404)
+    const kept = await insert(60_000)
+    await sweep()
+    const { rows } = await server.db.execute<{ id: string }>('select id from spread_runs')
+    const ids = rows.map((row) => row.id)
+    expect(ids).toContain(kept)
+    expect(ids).not.toContain(expired)
   })
 })

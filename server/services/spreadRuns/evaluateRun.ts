@@ -23,7 +23,7 @@ export interface RunProgress {
 interface EvaluateRunInput {
   readonly request: SpreadRunRequest
   readonly evaluations: number
-  /** Called twice a second. */
+  /** Called twice a second. Must not reject. */
   readonly onProgress: (progress: RunProgress) => Promise<void>
   /** Ends the run when aborted, by whoever started it or by its first failure. */
   readonly halt: AbortController
@@ -83,6 +83,10 @@ export async function evaluateRun(
     await reporting
     halt.signal.throwIfAborted()
     return textOf(jsonOf(await onThread({ kind: 'result', summaries })))
+  } catch (error) {
+    // A thread that was ended says only that it was; why is what counts.
+    halt.signal.throwIfAborted()
+    throw error
   } finally {
     clearTimeout(grace)
   }

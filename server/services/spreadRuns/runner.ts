@@ -79,8 +79,13 @@ export function createSpreadRunner({ db, compute, logger, limits }: RunnerContex
     if (!(await markSpreadRunRunning(db, id))) return
     const timeout = setTimeout(() => halt.abort(tookTooLong(limits.timeoutMs)), limits.timeoutMs)
     const onProgress = async (progress: RunProgress) => {
-      const isWanted = await updateSpreadRunProgress(db, id, progress)
-      if (!isWanted) halt.abort(new RunGivenUp())
+      try {
+        const isWanted = await updateSpreadRunProgress(db, id, progress)
+        if (!isWanted) halt.abort(new RunGivenUp())
+      } catch (error) {
+        // The next one is due in half a second; the result is what has to get through.
+        logger.warn({ err: error, run: id }, 'the progress of a run could not be written')
+      }
     }
     try {
       const result = await evaluateRun({ compute, lanes, laneCount }, { request, evaluations, onProgress, halt })
@@ -111,6 +116,8 @@ export function createSpreadRunner({ db, compute, logger, limits }: RunnerContex
 
   async function close(graceMs: number): Promise<void> {
     isClosing = true
+    // Still being taken in: they are told when they start.
+    for (const { work, halt } of places.values()) if (!work) halt.abort(interrupted())
     const cutOff = setTimeout(() => {
       for (const { halt } of places.values()) halt.abort(interrupted())
     }, graceMs)
