@@ -10,15 +10,32 @@ import { dot } from '../switched/flow'
  * @param dutyCycle - Fraction of the period spent in `on`; 0 < D < 1.
  */
 export function averageIntervals(on: Interval, off: Interval, dutyCycle: number): Interval {
-  const blend = (first: number[][], second: number[][]) =>
-    first.map((row, i) => row.map((value, j) => dutyCycle * value + (1 - dutyCycle) * second[i]![j]!))
-  return { A: blend(on.A, off.A), B: blend(on.B, off.B), C: blend(on.C, off.C), D: blend(on.D, off.D) }
+  const { A, B, C, D } = on
+  return {
+    A: blend(A, off.A, dutyCycle),
+    B: blend(B, off.B, dutyCycle),
+    C: blend(C, off.C, dutyCycle),
+    D: blend(D, off.D, dutyCycle),
+  }
+}
+
+/** D·first + (1 − D)·second. In plain loops: statistical runs come here for every sample. */
+function blend(first: readonly number[][], second: readonly number[][], dutyCycle: number): number[][] {
+  const blended: number[][] = []
+  for (let i = 0; i < first.length; i++) {
+    const row = first[i]!.slice()
+    const other = second[i]!
+    for (let j = 0; j < row.length; j++) row[j] = dutyCycle * row[j]! + (1 - dutyCycle) * other[j]!
+    blended.push(row)
+  }
+  return blended
 }
 
 /** x at which A·x + B·u = 0; null if there is no unique one. */
 export function restPoint(network: Interval, inputs: readonly number[]): Float64Array | null {
   const n = network.A.length
-  const x = Float64Array.from(network.B, (row) => -dot(row, inputs))
+  const x = new Float64Array(n)
+  for (let i = 0; i < n; i++) x[i] = -dot(network.B[i]!, inputs)
   return solveReal(flatten(network.A), n, x, 1) ? x : null
 }
 
