@@ -1,5 +1,6 @@
 import { useState } from 'react'
 import { StyleSheet, View } from 'react-native'
+import { proposalName } from './proposalName'
 import { figure, verdictOf } from '@/components/format'
 import { Button } from '@/components/ui/Button'
 import { VerdictWord } from '@/components/ui/Figure'
@@ -15,12 +16,6 @@ import { useDraft } from '@/hooks/draft/useDraft'
 import { formatEntry } from '@/hooks/draft/entries'
 import { useTheme } from '@/hooks/useTheme'
 
-const METHODS: Readonly<Record<Proposal['method'], string>> = {
-  'k-factor': 'by the K factor',
-  optimised: 'optimised over the corners',
-  placed: 'zeros and poles placed',
-}
-
 export interface ProposalCardProps {
   readonly proposal: Proposal
   readonly isFirst: boolean
@@ -31,8 +26,8 @@ export interface ProposalCardProps {
 export function ProposalCard({ proposal, isFirst, targets }: ProposalCardProps) {
   const theme = useTheme()
   const { design } = useDraft()
-  const { type, method, parts, margins, loadStepDip, reasons, shortfalls } = proposal
-  const name = `Type ${type}, ${METHODS[method]}`
+  const { type, parts, margins, loadStepDip, reasons, shortfalls } = proposal
+  const name = proposalName(proposal)
   const isFitted =
     design.compensator?.type === type &&
     COMPENSATOR_PARTS.every((part) => (design.compensator?.parts[part] ?? 0) === (parts.preferred[part] ?? 0))
@@ -44,7 +39,7 @@ export function ProposalCard({ proposal, isFirst, targets }: ProposalCardProps) 
       style={[styles.card, { borderColor: theme.rule, backgroundColor: theme.paper }]}
     >
       <Text variant="strong" heading={3}>
-        {name}
+        {isFirst ? `${name} (recommended)` : name}
       </Text>
       <Table
         label={`Parts, ${name}`}
@@ -101,7 +96,7 @@ export function ProposalCard({ proposal, isFirst, targets }: ProposalCardProps) 
           ))}
         </Notice>
       ) : null}
-      <Reasons reasons={reasons} name={name} />
+      <Reasons reasons={reasons} name={name} isOpenAtFirst={isFirst} />
       <View style={styles.left}>
         {isFitted ? (
           <Text variant="strong" tone="holds">
@@ -120,9 +115,17 @@ export function ProposalCard({ proposal, isFirst, targets }: ProposalCardProps) 
   )
 }
 
-/** Why these parts: folded away, so that the figures of several networks can be compared. */
-function Reasons({ reasons, name }: { readonly reasons: readonly string[]; readonly name: string }) {
-  const [isOpen, setOpen] = useState(false)
+/** Why these parts: in view for the recommended network, folded away for the others. */
+function Reasons({
+  reasons,
+  name,
+  isOpenAtFirst,
+}: {
+  readonly reasons: readonly string[]
+  readonly name: string
+  readonly isOpenAtFirst: boolean
+}) {
+  const [isOpen, setOpen] = useState(isOpenAtFirst)
   return (
     <>
       <View style={styles.flush}>

@@ -1,6 +1,7 @@
 import { useState } from 'react'
 import { StyleSheet, View } from 'react-native'
 import { ProposalCard } from './ProposalCard'
+import { ProposalTable } from './ProposalTable'
 import { PlacementFields, usePlacement } from './Placement'
 import { Button } from '@/components/ui/Button'
 import { Card } from '@/components/ui/Card'
@@ -19,17 +20,34 @@ import { PREFERRED_SERIES } from '@/server/contract/compensators'
 
 type Wish = 'suggested' | CompensatorType
 
+const WISHES: readonly { readonly value: Wish; readonly label: string }[] = [
+  { value: 'suggested', label: 'As suggested' },
+  { value: 'I', label: 'I' },
+  { value: 'II', label: 'II' },
+  { value: 'III', label: 'III' },
+]
+
+const AIMS: readonly { readonly value: 'margin' | 'crossover'; readonly label: string }[] = [
+  { value: 'margin', label: 'Most margin' },
+  { value: 'crossover', label: 'Highest crossover' },
+]
+
 const SERIES = PREFERRED_SERIES.map((value) => ({ value, label: value }))
 
 /** Proposes networks in values that can be bought. */
 export function WizardCard() {
   const { design, series } = useDraft()
-  const [wish, setWish] = useState<Wish>('suggested')
+  const [chosen, setWish] = useState<Wish>('suggested')
+  // The fast lane through the LED brings a zero of its own: there is no type I.
+  const isShunt = design.amplifier.kind === 'shunt-optocoupler'
+  const wish = isShunt && chosen === 'I' ? 'suggested' : chosen
+  const [aim, setAim] = useState<'margin' | 'crossover'>('margin')
   const [isShown, setShown] = useState(false)
   const placement = usePlacement(design)
   const query = useCompensatorsQuery(design, {
     resistorSeries: series.resistors,
     capacitorSeries: series.capacitors,
+    aim,
     ...(wish === 'suggested' ? {} : { type: wish }),
     ...(placement.value ? { placement: placement.value } : {}),
   })
@@ -39,14 +57,13 @@ export function WizardCard() {
       <Choice
         label="Type"
         value={wish}
-        options={[
-          { value: 'suggested', label: 'As suggested' },
-          { value: 'I', label: 'I' },
-          { value: 'II', label: 'II' },
-          { value: 'III', label: 'III' },
-        ]}
+        options={isShunt ? WISHES.filter(({ value }) => value !== 'I') : WISHES}
         onChange={setWish}
       />
+      {/* A crossover of one's own leaves nothing to choose here. */}
+      {design.targets.crossover === null ? (
+        <Choice label="What the optimiser is after" value={aim} options={AIMS} onChange={setAim} />
+      ) : null}
       <Fields>
         <Select
           label="Resistor series"
@@ -76,6 +93,7 @@ export function WizardCard() {
               {query.data.refusal ?? 'No network of this type meets the wish. Try another type or another crossover.'}
             </Notice>
           ) : null}
+          {proposals.length > 1 ? <ProposalTable proposals={proposals} series={series} /> : null}
           {proposals.map((proposal, index) => (
             <ProposalCard key={index} proposal={proposal} isFirst={index === 0} targets={design.targets} />
           ))}

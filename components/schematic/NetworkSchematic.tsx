@@ -2,6 +2,8 @@ import { useState } from 'react'
 import { StyleSheet, View } from 'react-native'
 import Svg, { G, Path } from 'react-native-svg'
 import { Lines } from './Lines'
+import { NetworkPart, partText, type Ink, type NetworkParts } from './NetworkPart'
+import { SHUNT_HEIGHT, ShuntNetwork } from './ShuntNetwork'
 import { Capacitor, Earth, Junction, Resistor, STROKE, Wire } from './symbols'
 import { PlotText } from '@/components/plots/PlotText'
 import type { CompensatorPart, DesignDocument } from '@/converters/document'
@@ -10,8 +12,6 @@ import { useTheme } from '@/hooks/useTheme'
 
 const WIDTH = 308
 const HEIGHT = 262
-
-type Parts = Partial<Record<CompensatorPart, number | null>>
 
 export interface NetworkSchematicProps {
   readonly design: DesignDocument
@@ -22,32 +22,39 @@ export function NetworkSchematic({ design }: NetworkSchematicProps) {
   const [width, setWidth] = useState(0)
   const theme = useTheme()
   const { compensator, amplifier, sense, output } = design
-  if (!compensator || amplifier.kind === 'shunt-optocoupler') return null
-  const parts: Parts = { ...compensator.parts, R1: compensator.parts.R1 ?? sense.upperResistance }
+  if (!compensator) return null
+  const parts: NetworkParts = { ...compensator.parts, R1: compensator.parts.R1 ?? sense.upperResistance }
   const lower = lowerResistance(parts.R1 ?? 0, sense.referenceVoltage, output.voltage)
   const ink: Ink = { color: theme.ink, ground: theme.sheet, value: theme.accent }
+  const height = amplifier.kind === 'shunt-optocoupler' ? SHUNT_HEIGHT : HEIGHT
   const left = Math.max(0, (width - WIDTH) / 2)
   const shared = { parts, hasLead: compensator.type === 'III', ink }
   return (
     <View
       role="img"
       aria-label={`Type ${compensator.type} network: ${listed(parts)}`}
-      style={styles.frame}
+      style={[styles.frame, { minHeight: height }]}
       onLayout={(event) => setWidth(event.nativeEvent.layout.width)}
     >
       {width === 0 ? null : (
-        <Svg width={Math.max(WIDTH, width)} height={HEIGHT} aria-hidden>
+        <Svg width={Math.max(WIDTH, width)} height={height} aria-hidden>
           <G transform={`translate(${left} 0)`}>
-            <Divider {...shared} lower={lower} />
-            <Amplifier
-              reference={formatEntry(sense.referenceVoltage, 'V')}
-              isCurrent={amplifier.kind === 'transconductance'}
-              ink={ink}
-            />
-            {amplifier.kind === 'op-amp' ? (
-              <Feedback {...shared} isTypeI={compensator.type === 'I'} />
+            {amplifier.kind === 'shunt-optocoupler' ? (
+              <ShuntNetwork {...shared} amplifier={amplifier} reference={sense.referenceVoltage} lower={lower} />
             ) : (
-              <Shunt {...shared} isTypeI={compensator.type === 'I'} />
+              <>
+                <Divider {...shared} lower={lower} />
+                <Amplifier
+                  reference={formatEntry(sense.referenceVoltage, 'V')}
+                  isCurrent={amplifier.kind === 'transconductance'}
+                  ink={ink}
+                />
+                {amplifier.kind === 'op-amp' ? (
+                  <Feedback {...shared} isTypeI={compensator.type === 'I'} />
+                ) : (
+                  <Shunt {...shared} isTypeI={compensator.type === 'I'} />
+                )}
+              </>
             )}
           </G>
         </Svg>
@@ -61,50 +68,15 @@ function lowerResistance(upper: number, reference: number, output: number): numb
   return output > reference ? (upper * reference) / (output - reference) : null
 }
 
-function listed(parts: Parts): string {
+function listed(parts: NetworkParts): string {
   return Object.entries(parts)
     .filter(([, value]) => value)
-    .map(([name, value]) => `${name} ${value ? valueOf(name as CompensatorPart, value) : ''}`)
+    .map(([name, value]) => `${name} ${value ? partText(name as CompensatorPart, value) : ''}`)
     .join(', ')
 }
 
-function valueOf(name: CompensatorPart, value: number): string {
-  return formatEntry(value, name.startsWith('R') ? 'Ω' : 'F')
-}
-
-interface Ink {
-  readonly color: string
-  readonly ground: string
-  readonly value: string
-}
-
-interface PartProps {
-  readonly name: CompensatorPart
-  readonly parts: Parts
-  readonly x: number
-  readonly y: number
-  readonly ink: Ink
-  readonly isVertical?: boolean
-  /** Where the lettering stands. */
-  readonly side?: 'above' | 'below' | 'right'
-}
-
-/** One part with its name and value; a part that is not fitted leaves its wire open. */
-function Part({ name, parts, x, y, ink, isVertical, side = 'above' }: PartProps) {
-  const value = parts[name]
-  const Symbol = name.startsWith('R') ? Resistor : Capacitor
-  const lines = [name, value ? valueOf(name, value) : 'not fitted']
-  const at = { above: { x, y: y - 29 }, below: { x, y: y + 22 }, right: { x: x + 15, y } }[side]
-  return (
-    <G>
-      <Symbol x={x} y={y} isVertical={isVertical ?? false} color={ink.color} ground={ink.ground} />
-      <Lines {...at} lines={lines} color={ink.value} isCentred={side !== 'right'} />
-    </G>
-  )
-}
-
 interface NetworkProps {
-  readonly parts: Parts
+  readonly parts: NetworkParts
   readonly hasLead: boolean
   readonly ink: Ink
 }
@@ -121,12 +93,12 @@ function Divider({ parts, hasLead, lower, ink }: NetworkProps & { readonly lower
       <PlotText x={2} y={NODE.y + 18} color={ink.color}>
         output
       </PlotText>
-      <Part name="R1" parts={parts} x={62} y={NODE.y} ink={ink} side="below" />
+      <NetworkPart name="R1" parts={parts} x={62} y={NODE.y} ink={ink} side="below" />
       {hasLead ? (
         <>
           <Wire color={ink.color} d={`M22 ${NODE.y}V92H${NODE.x}V${NODE.y}`} />
-          <Part name="R3" parts={parts} x={44} y={92} ink={ink} />
-          <Part name="C3" parts={parts} x={86} y={92} ink={ink} />
+          <NetworkPart name="R3" parts={parts} x={44} y={92} ink={ink} />
+          <NetworkPart name="C3" parts={parts} x={86} y={92} ink={ink} />
           <Junction x={22} y={NODE.y} color={ink.color} />
         </>
       ) : null}
@@ -193,13 +165,13 @@ function Feedback({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: bo
       <Junction x={left} y={NODE.y} color={ink.color} />
       <Junction x={right} y={OUT.y} color={ink.color} />
       {isTypeI ? (
-        <Part name="C1" parts={parts} x={194} y={106} ink={ink} />
+        <NetworkPart name="C1" parts={parts} x={194} y={106} ink={ink} />
       ) : (
         <>
-          <Part name="R2" parts={parts} x={160} y={106} ink={ink} />
-          <Part name="C1" parts={parts} x={228} y={106} ink={ink} />
+          <NetworkPart name="R2" parts={parts} x={160} y={106} ink={ink} />
+          <NetworkPart name="C1" parts={parts} x={228} y={106} ink={ink} />
           <Wire color={ink.color} d={`M${left} 106V44H${right}V106`} isDashed={!parts.C2} />
-          <Part name="C2" parts={parts} x={194} y={44} ink={ink} />
+          <NetworkPart name="C2" parts={parts} x={194} y={44} ink={ink} />
           <Junction x={left} y={106} color={ink.color} />
           <Junction x={right} y={106} color={ink.color} />
         </>
@@ -223,11 +195,11 @@ function Shunt({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: boole
       <Junction x={first} y={top} color={ink.color} />
       <Earth x={first} y={232} color={ink.color} />
       {isTypeI ? (
-        <Part name="C1" parts={parts} x={first} y={120} ink={ink} isVertical side="right" />
+        <NetworkPart name="C1" parts={parts} x={first} y={120} ink={ink} isVertical side="right" />
       ) : (
         <>
-          <Part name="R2" parts={parts} x={first} y={96} ink={ink} isVertical side="right" />
-          <Part name="C1" parts={parts} x={first} y={196} ink={ink} isVertical side="right" />
+          <NetworkPart name="R2" parts={parts} x={first} y={96} ink={ink} isVertical side="right" />
+          <NetworkPart name="C1" parts={parts} x={first} y={196} ink={ink} isVertical side="right" />
           <Wire color={ink.color} d={`M${second} ${top}V150`} isDashed={!parts.C2} />
           <Junction x={second} y={top} color={ink.color} />
           <Capacitor x={second} y={112} isVertical color={ink.color} ground={ink.ground} />
@@ -235,7 +207,7 @@ function Shunt({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: boole
           <Lines
             x={second}
             y={182}
-            lines={['C2', parts.C2 ? valueOf('C2', parts.C2) : 'not fitted']}
+            lines={['C2', parts.C2 ? partText('C2', parts.C2) : 'not fitted']}
             color={ink.value}
             isCentred
           />
@@ -245,4 +217,4 @@ function Shunt({ parts, ink, isTypeI }: NetworkProps & { readonly isTypeI: boole
   )
 }
 
-const styles = StyleSheet.create({ frame: { minHeight: HEIGHT, overflow: 'hidden' } })
+const styles = StyleSheet.create({ frame: { overflow: 'hidden' } })
