@@ -125,13 +125,13 @@ function withLandmarks(grid: Float64Array, landmarks: readonly number[], merged:
   if (landmarks.length === 0) return grid
   const last = grid[grid.length - 1]!
   const extra: number[] = []
-  for (const landmark of landmarks.slice(0, MOST_LANDMARKS)) {
+  for (let k = 0; k < Math.min(landmarks.length, MOST_LANDMARKS); k++) {
     for (const share of AROUND) {
-      const omega = 2 * Math.PI * landmark * share
+      const omega = 2 * Math.PI * landmarks[k]! * share
       if (omega > grid[0]! && omega < last) extra.push(omega)
     }
   }
-  extra.sort((a, b) => a - b)
+  if (landmarks.length > 1) extra.sort((a, b) => a - b)
   let taken = 0
   for (let i = 0, k = 0; i < grid.length + extra.length; i++) {
     const isExtra = k < extra.length && extra[k]! < grid[taken]!

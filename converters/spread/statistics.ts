@@ -15,7 +15,7 @@ import { accumulate, type SpreadSummary } from './summary'
 import { conditioned, quantileOf, sampleAt, samplerOf, variablesOf, type Sample, type Variable } from './variation'
 
 /** Whole curves and closed-loop poles are kept of so many samples at most, evenly among them. */
-const MOST_KEPT: Readonly<Record<SpreadModel, number>> = { averaged: 400, switched: 200 }
+const MOST_KEPT: Readonly<Record<SpreadModel, number>> = { averaged: 250, switched: 200 }
 const BAND_FREQUENCIES = 96
 
 /** Which share of a run to do: part `index` of `of` equal ones. */
