@@ -32,16 +32,18 @@ export function HistogramPlot({ title, fileName, summary, unit, edges, counts, a
   const from = (isAimNear ? Math.min(low, aim) : low) / axis.size
   const to = (isAimNear ? Math.max(high, aim) : high) / axis.size
   const margin = 0.03 * Math.max(to - from, 1e-9)
-  const domain = { x: [from - margin, to + margin], y: [0, 1.14 * most] } as {
-    x: [number, number]
-    y: [number, number]
+  const domain: { x: [number, number]; y: [number, number] } = {
+    x: [from - margin, to + margin],
+    y: [0, 1.14 * most],
   }
   return (
     <PlotFrame title={title} fileName={fileName} summary={summary} table={() => tableOf(unit, edges, counts)}>
       {(width) => {
         const inner = width - PADDING.left - PADDING.right
         const step = (inner * (high - low)) / axis.size / counts.length / (domain.x[1] - domain.x[0])
-        const isAimRight = isAimNear && aim / axis.size > (domain.x[0] + domain.x[1]) / 2
+        const aimShare = isAimNear ? (aim / axis.size - domain.x[0]) / (domain.x[1] - domain.x[0]) : 0
+        const aimAt = PADDING.left + inner * aimShare
+        const isAimRight = aimShare > 0.5
         return (
           <VictoryChart width={width} height={HEIGHT} padding={PADDING} domain={domain}>
             <VictoryAxis
@@ -71,19 +73,17 @@ export function HistogramPlot({ title, fileName, summary, unit, edges, counts, a
             />
             {isAimNear ? (
               <VictoryLine
-                data={[
-                  { x: aim / axis.size, y: 0 },
-                  { x: aim / axis.size, y: 1.14 * most, label: `aim ${figure(aim, unit)}` },
-                ]}
+                data={[0, 1.14 * most].map((y) => ({ x: aim / axis.size, y }))}
                 style={{ data: { stroke: theme.accent, strokeWidth: 1.8, strokeDasharray: '5 3' } }}
-                labelComponent={
-                  <VictoryLabel
-                    textAnchor={isAimRight ? 'end' : 'start'}
-                    dx={isAimRight ? -6 : 6}
-                    dy={16}
-                    style={{ ...lettering, fill: theme.accent }}
-                  />
-                }
+              />
+            ) : null}
+            {isAimNear ? (
+              <VictoryLabel
+                x={aimAt + (isAimRight ? -6 : 6)}
+                y={PADDING.top + 8}
+                textAnchor={isAimRight ? 'end' : 'start'}
+                text={`aim ${figure(aim, unit)}`}
+                style={{ ...lettering, fill: theme.accent }}
               />
             ) : null}
           </VictoryChart>

@@ -12,7 +12,6 @@ export interface BarListProps {
     readonly text: string
     /** Length of the bar; its sign decides on the side. */
     readonly value: number
-    readonly note?: string | undefined
   }[]
   /** Bars to both sides of a middle line. */
   readonly isSigned?: boolean
@@ -24,7 +23,7 @@ export function BarList({ label, items, isSigned = false }: BarListProps) {
   const greatest = Math.max(...items.map(({ value }) => Math.abs(value)), 1e-12)
   return (
     <View role="list" aria-label={label} style={styles.list}>
-      {items.map(({ key, name, text, value, note }) => {
+      {items.map(({ key, name, text, value }) => {
         const share = (Math.abs(value) / greatest) * (isSigned ? 50 : 100)
         const from = isSigned ? (value < 0 ? 50 - share : 50) : 0
         return (
@@ -48,11 +47,6 @@ export function BarList({ label, items, isSigned = false }: BarListProps) {
               />
               {isSigned ? <View style={[styles.middle, { backgroundColor: theme.edge }]} /> : null}
             </View>
-            {note ? (
-              <Text variant="small" tone="quiet">
-                {note}
-              </Text>
-            ) : null}
           </View>
         )
       })}

@@ -112,12 +112,11 @@ function Influences({ quantities }: { readonly quantities: readonly CornerQuanti
           </Text>
           <BarList
             label="Quantities by influence"
-            items={ranked.map(({ key, label, influence, isCombined }) => ({
+            items={ranked.map(({ key, label, influence }) => ({
               key,
               name: sentence(label),
-              text: ratio(influence, 2),
+              text: influence.toFixed(2),
               value: influence,
-              note: isCombined ? undefined : 'left at nominal in the corners',
             }))}
           />
         </>

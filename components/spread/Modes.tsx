@@ -5,11 +5,15 @@ import { Text } from '@/components/ui/Text'
 import type { StepResponse } from '@/converters/results'
 
 const MOST_SHOWN = 6
+/** Of the leading one's amplitude; what is smaller cannot be seen. */
+const LEAST_SHARE = 1e-3
 
 /** What each pole, or pair of poles, of the closed loop adds to the step. */
 export function Modes({ prediction: { modes } }: { readonly prediction: StepResponse }) {
   const leading = modes[0]
   if (!leading) return null
+  const least = LEAST_SHARE * Math.abs(leading.amplitude)
+  const shown = modes.slice(0, MOST_SHOWN).filter(({ amplitude }) => Math.abs(amplitude) >= least)
   const rings = leading.ringingFrequency > 0
   return (
     <Card title="What the poles contribute">
@@ -25,7 +29,7 @@ export function Modes({ prediction: { modes } }: { readonly prediction: StepResp
           { title: 'Time constant', width: 100, isNumber: true },
           { title: 'Rings at', width: 92, isNumber: true },
         ]}
-        rows={modes.slice(0, MOST_SHOWN).map((mode, index) => ({
+        rows={shown.map((mode, index) => ({
           key: String(index),
           cells: [
             figure(mode.amplitude, 'V'),

@@ -35,7 +35,10 @@ export function PeriodMapCard({ map, alternates }: PeriodMapCardProps) {
       {map.isStable && !map.firesEarly ? (
         sentences.map((sentence) => <Text key={sentence}>{sentence}</Text>)
       ) : (
-        <Notice kind="fault" title="The switched loop does not hold still">
+        <Notice
+          kind="fault"
+          title={map.isStable ? 'The comparator fires early' : 'The switched loop does not hold still'}
+        >
           {sentences.map((sentence) => (
             <Text key={sentence} variant="small">
               {sentence}

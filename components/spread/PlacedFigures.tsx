@@ -13,7 +13,7 @@ export interface PlacedFiguresProps {
 export function PlacedFigures({ placed, targets }: PlacedFiguresProps) {
   const { crossover, phaseMargin, gainMargin, modulusMargin, isStable } = placed.margins
   return (
-    <FigureGrid least={140}>
+    <FigureGrid least={160}>
       <Figure
         label="Phase margin"
         isWord={!isStable}

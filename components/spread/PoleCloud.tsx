@@ -1,6 +1,6 @@
 import { useMemo } from 'react'
 import { PoleZeroMap } from '@/components/plots/PoleZeroMap'
-import { pointOf, upperHalf, type PlaneRoot } from '@/components/plots/sPlane'
+import { pointOf, upperHalf, type PlanePoint, type PlaneRoot } from '@/components/plots/sPlane'
 import { Card } from '@/components/ui/Card'
 import { Text } from '@/components/ui/Text'
 import type { Root } from '@/converters/results'
@@ -10,17 +10,23 @@ export interface PoleCloudProps {
   readonly poles: SpreadResult['closedLoopPoles']
   /** Of the nominal design, where the samples are of the design in view. */
   readonly nominal: readonly Root[]
+  readonly switchingFrequency: number // Hz
 }
 
+/** Times the switching frequency; poles beyond it say nothing of how the output settles and would press the others together. */
+const HIGHEST = 2
+
 /** Where the closed-loop poles of the samples lie, one dot each, around the nominal ones. */
-export function PoleCloud({ poles, nominal }: PoleCloudProps) {
-  const { cloud, roots } = useMemo(
-    () => ({
-      cloud: poles.flatMap((sample) => sample.filter(({ imaginary }) => imaginary >= 0).map(pointOf)),
-      roots: upperHalf(nominal).map((root): PlaneRoot => ({ root, kind: 'pole', owner: 'loop' })),
-    }),
-    [poles, nominal],
-  )
+export function PoleCloud({ poles, nominal, switchingFrequency }: PoleCloudProps) {
+  const { cloud, roots } = useMemo(() => {
+    const isShown = ({ frequency }: PlanePoint) => frequency <= HIGHEST * switchingFrequency
+    return {
+      cloud: poles.flatMap((sample) => sample.filter(({ imaginary }) => imaginary >= 0).map(pointOf)).filter(isShown),
+      roots: upperHalf(nominal)
+        .filter(isShown)
+        .map((root): PlaneRoot => ({ root, kind: 'pole', owner: 'loop' })),
+    }
+  }, [poles, nominal, switchingFrequency])
   const growing = poles.filter((sample) => sample.some(({ real }) => real > 0)).length
   const words =
     growing === 0
@@ -36,7 +42,7 @@ export function PoleCloud({ poles, nominal }: PoleCloudProps) {
         summary={words}
       />
       <Text variant="small" tone="quiet">
-        {`${words} Averaged model; each dot is a pole of one sample${roots.length > 0 ? ', each × one of the nominal design' : ''}.`}
+        {`${words} Averaged model; each dot is a pole of one sample${roots.length > 0 ? ', each × one of the nominal design' : ''}. Poles above twice the switching frequency are left out.`}
       </Text>
     </Card>
   )

@@ -62,7 +62,11 @@ export function SamplesView() {
       figures={
         <>
           {result ? (
-            <Reasons result={result} nominal={isOlder ? NONE : (analysis?.loop?.closedLoopPoles ?? NONE)} />
+            <Reasons
+              result={result}
+              nominal={isOlder ? NONE : (analysis?.loop?.closedLoopPoles ?? NONE)}
+              switchingFrequency={design.switchingFrequency}
+            />
           ) : null}
           <Caution />
         </>
@@ -115,9 +119,10 @@ function Standing({ statistics }: { readonly statistics: StatisticalRun }) {
 interface ReasonsProps {
   readonly result: SpreadResult
   readonly nominal: readonly Root[]
+  readonly switchingFrequency: number // Hz
 }
 
-const Reasons = memo(function Reasons({ result, nominal }: ReasonsProps) {
+const Reasons = memo(function Reasons({ result, nominal, switchingFrequency }: ReasonsProps) {
   const { worst, quantities, targets, conductionNotModelled } = result
   return (
     <>
@@ -128,7 +133,9 @@ const Reasons = memo(function Reasons({ result, nominal }: ReasonsProps) {
         </Notice>
       ) : null}
       <Regression regression={result.regression} />
-      {result.closedLoopPoles.length > 0 ? <PoleCloud poles={result.closedLoopPoles} nominal={nominal} /> : null}
+      {result.closedLoopPoles.length > 0 ? (
+        <PoleCloud poles={result.closedLoopPoles} nominal={nominal} switchingFrequency={switchingFrequency} />
+      ) : null}
       {worst ? (
         <Card title="Worst sample">
           <PlacedFigures placed={worst} targets={targets} />

@@ -2,10 +2,10 @@ import { useState } from 'react'
 import { LimitFields, readLimits } from './Limits'
 import { Modes } from './Modes'
 import { PeriodMapCard } from './PeriodMapCard'
-import { Readings } from './Readings'
+import { Readings, StartReadings } from './Readings'
 import { ViewChips } from './Views'
 import { Waveforms } from './Waveforms'
-import { Caution } from '@/components/design/Cautions'
+import { Caution, Warnings } from '@/components/design/Cautions'
 import { Columns } from '@/components/design/Columns'
 import { EntryNotice } from '@/components/design/EntryNotice'
 import { Fault } from '@/components/design/Fault'
@@ -13,18 +13,32 @@ import { Card } from '@/components/ui/Card'
 import { Choice } from '@/components/ui/Choice'
 import { Loading } from '@/components/ui/states'
 import { Text } from '@/components/ui/Text'
+import type { Warning } from '@/converters/results'
 import { useDraft } from '@/hooks/draft/useDraft'
 import { useSimulationQuery } from '@/hooks/queries/simulations'
 import { useKeptSpread } from '@/hooks/spread/keptSpread'
+import { useDesignAnalysis } from '@/hooks/useDesignAnalysis'
 import { useLast } from '@/hooks/useLast'
 
 const SCENARIOS = [
-  { value: 'load-step', label: 'Load step', words: 'The load jumps from half to full and stays there.' },
-  { value: 'line-step', label: 'Line step', words: 'The line jumps from nominal to its highest.' },
-  { value: 'soft-start', label: 'Soft start', words: 'The wanted output rises from zero at full load.' },
-  { value: 'overload', label: 'Overload', words: 'More than full load for a while, then full load again.' },
+  { value: 'load-step', label: 'Load step', words: 'The upper half of the load range comes at once and stays.' },
+  { value: 'line-step', label: 'Line step', words: 'The line jumps from its lowest to its highest at full load.' },
+  {
+    value: 'soft-start',
+    label: 'Soft start',
+    words: 'At full load the wanted output rises from zero over 400 periods.',
+  },
+  { value: 'overload', label: 'Overload', words: 'Twice full load for 200 periods, then full load again.' },
 ] as const
 type ScenarioKind = (typeof SCENARIOS)[number]['value']
+
+/** What the analysis has to say of the same matter as the period map, cures with it. */
+const SWITCHING: readonly Warning['code'][] = [
+  'subharmonic-oscillation',
+  'unstable-orbit',
+  'unstable-switching',
+  'unstable-loop',
+]
 
 /** The closed loop cycle by cycle, limits of duty and amplifier included, beside the averaged prediction. */
 export function WaveformsView() {
@@ -34,6 +48,7 @@ export function WaveformsView() {
   const query = useSimulationQuery(design, { scenario: { kind } })
   const last = useLast(query.data)
   const { error } = query
+  const { analysis } = useDesignAnalysis()
   // An answer to another scenario is not shown under this one's name.
   const simulation = query.isPlaceholderData && error === null ? undefined : last
   const limits = readLimits(texts, design)
@@ -59,7 +74,11 @@ export function WaveformsView() {
           <Fault error={error} isStale={false} onRetry={() => void query.refetch()} />
         ) : simulation ? (
           <>
-            <Readings simulation={simulation} limits={limits} />
+            {kind === 'soft-start' ? (
+              <StartReadings simulation={simulation} limits={limits} wanted={design.output.voltage} />
+            ) : (
+              <Readings simulation={simulation} limits={limits} />
+            )}
             <Waveforms simulation={simulation} name={scenario.label} limits={limits} design={design} />
           </>
         ) : (
@@ -71,6 +90,7 @@ export function WaveformsView() {
           {simulation && !error ? (
             <>
               <PeriodMapCard map={simulation.map} alternates={simulation.readings.alternates} />
+              <Warnings warnings={(analysis?.warnings ?? []).filter(({ code }) => SWITCHING.includes(code))} />
               {simulation.prediction ? <Modes prediction={simulation.prediction} /> : null}
             </>
           ) : null}

@@ -30,7 +30,7 @@ export function mapSentences(
     )
   } else if (!isStable) {
     sentences.push(
-      'A Bode plot of the averaged model does not show this. More slope at the comparator, or less gain of the network at the switching frequency, cures it.',
+      'The margins of the averaged model need not show it. More slope at the comparator, or less gain of the network near the switching frequency, is the usual cure.',
     )
   }
   if (alternates) sentences.push('The transient agrees: at its end the duty goes up and down from period to period.')
