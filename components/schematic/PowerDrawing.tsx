@@ -48,7 +48,7 @@ export function PowerDrawing({ design, layout, color, ground, valueColor }: Draw
         </G>
       ))}
       <Load kind={design.load} isInverting={isInverting(design.topology)} x={load} y={middle} {...ink} />
-      {beside(load + 14, values.load)}
+      {beside(load + (design.load === 'constant-current' ? 18 : 14), values.load)}
     </G>
   )
 }

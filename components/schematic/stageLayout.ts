@@ -11,6 +11,9 @@ export interface Rungs {
   readonly windings: number // ahead of windings that stand first
 }
 
+/** More room behind an upright, whose own lettering stands between. */
+const AFTER_UPRIGHT = 24
+
 /** Half the distance between the windings of a transformer. */
 export const WINDING_GAP = 14
 
@@ -36,7 +39,7 @@ export function placeLadder(stations: readonly Station[], rungs: Rungs, start: n
     const isFirst = index === firstOfStage
     const before = stations[index - 1]
     if (station.stands === 'along') {
-      const width = isFirst ? rungs.first : station.isNarrow ? rungs.narrow : rungs.along
+      const width = alongWidth(station, rungs, { isFirst, stands: index === 0 ? 'first' : 'behind' })
       // The gate's wire leaves an upright to its left, and the middle of a part along the rail.
       const middle = isFirst && station.symbol === 'transistor' ? width - rungs.along / 2 : width / 2
       placed.push({ station, x: x + middle, end: x + width })
@@ -45,12 +48,23 @@ export function placeLadder(stations: readonly Station[], rungs: Rungs, start: n
       if (before?.stands !== 'along') x += rungs.across
       placed.push({ station, x, end: x })
     } else {
-      x += (isFirst ? rungs.windings : 0) + WINDING_GAP
+      const ahead = before ? rungs.windings + AFTER_UPRIGHT : rungs.windings
+      x += (isFirst ? ahead : 0) + WINDING_GAP
       placed.push({ station, x, end: x + WINDING_GAP })
       x += WINDING_GAP
     }
   })
   return { placed, end: x }
+}
+
+function alongWidth(
+  station: Station,
+  rungs: Rungs,
+  { isFirst, stands }: { readonly isFirst: boolean; readonly stands: 'first' | 'behind' },
+): number {
+  if (stands === 'first') return rungs.first
+  if (isFirst) return rungs.first + (station.symbol === 'transistor' ? AFTER_UPRIGHT / 2 : 0)
+  return station.isNarrow ? rungs.narrow : rungs.along
 }
 
 export interface StageLayout {
@@ -77,7 +91,7 @@ export interface StageLayout {
 const TOP = 58
 const BOTTOM = 198
 const SOURCE = 18
-const RUNGS: Rungs = { along: 60, narrow: 44, first: 84, across: 56, windings: 84 }
+const RUNGS: Rungs = { along: 58, narrow: 42, first: 78, across: 56, windings: 84 }
 const BANK_STEP = 70
 const LOAD_STEP = 57
 const AFTER_LOAD = 56
@@ -105,6 +119,7 @@ export function stageLayout(available: number, design: Drawn): StageLayout {
   const rungs = placed.map((rung) => ({ ...rung, x: at(rung.x), end: at(rung.end) }))
   const banks = design.outputCapacitors.map((_, index) => end + index * BANK_STEP)
   const middle = (TOP + BOTTOM) / 2
+  const gate = gateOf(rungs, middle)
   return {
     width,
     height: 314,
@@ -115,8 +130,9 @@ export function stageLayout(available: number, design: Drawn): StageLayout {
     rungs,
     banks: banks.map(at),
     load: at(banks.at(-1)! + LOAD_STEP),
-    gate: gateOf(rungs, middle),
-    control: { top: 240, bottom: 300, left: 8, middle: width / 2, right: width - 22 },
+    gate,
+    // The gate's wire starts at the modulator, however far to the right the switch stands.
+    control: { top: 240, bottom: 300, left: 8, middle: Math.max(width / 2, gate.x + 30), right: width - 22 },
   }
 }
 

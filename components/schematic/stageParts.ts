@@ -55,7 +55,7 @@ function amplifierName(amplifier: DesignDocument['amplifier']): string {
     case 'transconductance':
       return `Transconductance, ${formatEntry(amplifier.transconductance, 'S')}`
     case 'shunt-optocoupler':
-      return `Shunt, optocoupler ${formatEntry(amplifier.currentTransferRatio, '%')}`
+      return `Optocoupler, ${formatEntry(amplifier.currentTransferRatio, '%')}`
   }
 }
 

@@ -55,6 +55,6 @@ export function TopologyCards({ value, onChange }: TopologyCardsProps) {
 
 const styles = StyleSheet.create({
   row: { flexDirection: 'row', flexWrap: 'wrap', gap: space.md },
-  card: { flexGrow: 1, flexBasis: 220, borderWidth: 1, borderRadius: 8, padding: space.md, gap: 2 },
+  card: { flexGrow: 1, flexBasis: 220, maxWidth: 420, borderWidth: 1, borderRadius: 8, padding: space.md, gap: 2 },
   chosen: { borderWidth: 2, padding: space.md - 1 },
 })

@@ -6,9 +6,9 @@ import { Capacitor, Junction, Wire } from '@/components/schematic/symbols'
 import type { Topology } from '@/converters/document'
 
 const WIDTH = 200
-const HEIGHT = 92
-const TOP = 26
-const BOTTOM = 82
+const HEIGHT = 104
+const TOP = 24
+const BOTTOM = 98
 const START = 10
 const END = 190
 const MIDDLE = (TOP + BOTTOM) / 2
@@ -49,7 +49,7 @@ export function TopologyGlyph({
             bottom={BOTTOM}
             gap={WINDING_GAP}
             isSynchronous={false}
-            winding={{ upper: TOP + 12, below: BOTTOM - 13 }}
+            winding={{ upper: TOP + 22, below: BOTTOM - 15 }}
             {...ink}
           />
         ))}
