@@ -6,7 +6,7 @@ import { pointOf, upperHalf, type PlaneRoot } from '@/components/plots/sPlane'
 import { Button } from '@/components/ui/Button'
 import { Card } from '@/components/ui/Card'
 import { Text } from '@/components/ui/Text'
-import { decibels } from '@/components/format'
+import { formatQuantity } from '@/converters/quantities'
 import type { RootLocus } from '@/converters/results'
 import { operatingPointOf } from '@/hooks/draft/schema'
 import { useDraft } from '@/hooks/draft/useDraft'
@@ -47,15 +47,18 @@ export const ClosedLoopMap = memo(function ClosedLoopMap({ analysis, loop }: Clo
   )
 })
 
+/** The locus steps by whole decibels. */
+const whole = (gain: number) => formatQuantity(Math.round(gain), 'dB')
+
 /** Between which gains the loop stays stable, in words. */
 export function rangeSentence({ stableRange, gainsDb }: RootLocus): string {
   const from = gainsDb[0] ?? 0
   const to = gainsDb.at(-1) ?? 0
-  const drawn = `Lines: where the poles go while the loop gain is scaled from ${decibels(from)} to ${decibels(to)}; the copper × are the present gain.`
+  const drawn = `Lines: where the poles go while the loop gain is scaled from ${whole(from)} to ${whole(to)}; the copper × are the present gain.`
   if (!stableRange) return `${drawn} At the present gain the loop is unstable.`
   const { lowestDb, highestDb } = stableRange
-  const up = highestDb === null ? 'may rise as far as is drawn' : `may rise by ${decibels(highestDb)}`
-  const down = lowestDb === null ? 'may fall as far as is drawn' : `may fall by ${decibels(-lowestDb)}`
+  const up = highestDb === null ? 'may rise as far as is drawn' : `may rise by at least ${whole(highestDb)}`
+  const down = lowestDb === null ? 'may fall as far as is drawn' : `may fall by at least ${whole(-lowestDb)}`
   return `${drawn} The gain ${up} and ${down} before the loop becomes unstable.`
 }
 

@@ -65,7 +65,7 @@ export function StartReadings({
           note={`of the mean output${limitNote(limits.deviation, 'V')}`}
         />
         <Figure
-          label="Nine tenths of the output"
+          label="Nine tenths of the rise"
           value={recoveryTime === null ? 'not reached' : figure(recoveryTime, 's')}
           note="from the start"
         />
