@@ -6,7 +6,6 @@ import { pointOf, upperHalf, type PlaneRoot } from '@/components/plots/sPlane'
 import { Button } from '@/components/ui/Button'
 import { Card } from '@/components/ui/Card'
 import { Text } from '@/components/ui/Text'
-import { formatQuantity } from '@/converters/quantities'
 import type { RootLocus } from '@/converters/results'
 import { operatingPointOf } from '@/hooks/draft/schema'
 import { useDraft } from '@/hooks/draft/useDraft'
@@ -48,7 +47,7 @@ export const ClosedLoopMap = memo(function ClosedLoopMap({ analysis, loop }: Clo
 })
 
 /** The locus steps by whole decibels. */
-const whole = (gain: number) => formatQuantity(Math.round(gain), 'dB')
+const whole = (gain: number) => `${Math.round(gain)} dB`.replace('-', '−')
 
 /** Between which gains the loop stays stable, in words. */
 export function rangeSentence({ stableRange, gainsDb }: RootLocus): string {

@@ -3,6 +3,7 @@ import { PlotFrame } from './PlotFrame'
 import { PADDING, ticksAcross, tickText, unitFor, useAxisStyles } from './victoryStyle'
 import { figure } from '@/components/format'
 import type { Unit } from '@/converters/quantities'
+import { formatEntry } from '@/hooks/draft/entries'
 import { useTheme } from '@/hooks/useTheme'
 
 export interface HistogramPlotProps {
@@ -82,7 +83,7 @@ export function HistogramPlot({ title, fileName, summary, unit, edges, counts, a
                 x={aimAt + (isAimRight ? -6 : 6)}
                 y={PADDING.top + 8}
                 textAnchor={isAimRight ? 'end' : 'start'}
-                text={`aim ${figure(aim, unit)}`}
+                text={`aim ${formatEntry(aim, unit)}`}
                 style={{ ...lettering, fill: theme.accent }}
               />
             ) : null}
