@@ -55,7 +55,7 @@ export function createComputePool({ threads, queue, timeoutMs }: ComputePoolOpti
 
   async function run(request: TaskRequest, gone?: AbortSignal): Promise<Uint8Array> {
     if (pending >= threads + queue) throw busy()
-    const started = new Int32Array(new SharedArrayBuffer(Int32Array.BYTES_PER_ELEMENT))
+    const started = sharedInteger()
     const stop = new AbortController()
     const timeout = setTimeout(() => stop.abort(), timeoutMs)
     let grace: NodeJS.Timeout | undefined
@@ -96,7 +96,9 @@ export function createComputePool({ threads, queue, timeoutMs }: ComputePoolOpti
     runSpread,
     threads,
     warmUp: async () => {
-      await Promise.all(Array.from({ length: threads }, () => run(warmUpRequest)))
+      // Not timed: a thread that starts on a busy machine may take its time, and nobody waits for its answer.
+      const warm = () => piscina.run({ request: warmUpRequest, started: sharedInteger() })
+      await Promise.all(Array.from({ length: threads }, warm))
     },
     isAlive: () => !isClosed && piscina.threads.length > 0,
     close: async () => {
@@ -105,6 +107,8 @@ export function createComputePool({ threads, queue, timeoutMs }: ComputePoolOpti
     },
   }
 }
+
+const sharedInteger = () => new Int32Array(new SharedArrayBuffer(Int32Array.BYTES_PER_ELEMENT))
 
 function accepted<Answer extends WorkerAnswer | SpreadAnswer>(answer: Answer): Exclude<Answer, { kind: 'refused' }> {
   if (answer.kind === 'refused')

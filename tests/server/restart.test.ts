@@ -29,7 +29,7 @@ afterEach(async () => {
 
 /** The server in a process of its own. @returns where it listens, once it does */
 async function startProcess(): Promise<{ origin: string }> {
-  const env = { ...process.env, DATABASE_URL: database.url, PORT: '0', COMPUTE_THREADS: '2', LOG_LEVEL: 'info' }
+  const env = { ...process.env, DATABASE_URL: database.url, PORT: '0', COMPUTE_THREADS: '1', LOG_LEVEL: 'info' }
   const started = spawn('node', ['--import', 'tsx', 'server/index.ts'], {
     cwd: root,
     env,

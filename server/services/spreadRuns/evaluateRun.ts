@@ -57,21 +57,26 @@ export async function evaluateRun(
 
   const summaries: SpreadSummary[] = []
   const blocks = blocksOf(request, evaluations)
+  let interim: string | null = null
+  let isInterimDue = true
   async function doBlocks(): Promise<void> {
     for (let part = blocks.shift(); part; part = blocks.shift()) {
       const answer = await onThread({ kind: 'block', request, part, control })
       if (answer.kind === 'block') summaries.push(answer.summary)
+      if (isInterimDue && blocks.length > 0) {
+        isInterimDue = false
+        interim = textOf(jsonOf(await onThread({ kind: 'interim', summaries: withoutCurves(summaries) })))
+      }
     }
   }
 
   async function report(): Promise<void> {
-    let told = 0
     while (await pause(finished.signal)) {
-      const isNew = summaries.length > told
-      told = summaries.length
-      const interim = isNew ? await onThread({ kind: 'interim', summaries: withoutCurves(summaries) }) : null
-      const evaluationsDone = Math.min(Atomics.load(control, RUN_EVALUATIONS_DONE), evaluations)
-      await onProgress({ evaluationsDone, interim: interim && textOf(jsonOf(interim)) })
+      const news = interim
+      interim = null
+      // Made with the next block, so that the count does not wait for a thread.
+      isInterimDue = true
+      await onProgress({ evaluationsDone: Atomics.load(control, RUN_EVALUATIONS_DONE), interim: news })
     }
   }
 
