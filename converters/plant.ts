@@ -125,12 +125,15 @@ function poleRoles(
   }
 }
 
-/** Poles that the input filter adds: those nearest to its own resonance. */
+/** Poles that the input filter adds: the pair nearest to its own resonance, and a real one for its damping branch. */
 function filterPoles({ design: { inputFilter }, states }: Circuit, poles: readonly Complex[]): Complex[] {
   if (!inputFilter) return []
   const natural = 1 / Math.sqrt(inputFilter.inductance * inputFilter.capacitance)
   const count = states.filter((state) => state.startsWith('filter')).length
-  return [...poles].sort((a, b) => distanceToPair(a, natural) - distanceToPair(b, natural)).slice(0, count)
+  const nearest = [...poles].sort((a, b) => distanceToPair(a, natural) - distanceToPair(b, natural))
+  // The rest are real: half of another pair is never the filter's.
+  const real = nearest.slice(2).filter((pole) => pole.im === 0)
+  return [...nearest.slice(0, 2), ...real.slice(0, Math.max(0, count - 2))]
 }
 
 /** How far a pole is from a frequency (rad/s), in octaves; complex poles come first. */

@@ -3,6 +3,7 @@ import { startingDesign, WORKED_TOPOLOGIES } from '@/components/start/startingDe
 import { analyse, proposeCompensator } from '@/converters'
 import { parseDesign } from '@/converters/parse'
 import { beaconFlyback } from '@/db/seed/samples/beaconFlyback'
+import { logicRail } from '@/db/seed/samples/logicRail'
 import { vehicleSepic } from '@/db/seed/samples/vehicleSepic'
 
 const cases = [
@@ -32,4 +33,22 @@ describe.each(cases)('to begin with: %s', (_, input) => {
     expect(refusal).toBeNull()
     expect(proposals[0]?.margins.preferred.worst.isStable).toBe(true)
   })
+})
+
+it('a damped input filter leaves the output filter its pair of poles, and a network is proposed', () => {
+  const design = parseDesign({
+    ...logicRail.design,
+    inputFilter: {
+      inductance: 1e-6,
+      resistance: 10e-3,
+      capacitance: 22e-6,
+      esr: 3e-3,
+      dampingCapacitance: 11e-6,
+      dampingResistance: 0.53,
+    },
+  })
+  const roles = analyse(design).plant.poles.map(({ role }) => role)
+  expect(roles.filter((role) => role === 'output-filter')).toHaveLength(2)
+  expect(roles.filter((role) => role === 'input-filter')).toHaveLength(3)
+  expect(proposeCompensator(design).proposals.length).toBeGreaterThan(0)
 })
