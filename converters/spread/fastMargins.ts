@@ -17,7 +17,7 @@ export interface LoopShape {
 /** Where nothing but integrator and amplifier pole are, few points do. */
 const REGIONS = [
   { from: 1e-6, to: 1e-4, perDecade: 4 }, // shares of the switching frequency
-  { from: 1e-4, to: 0.5, perDecade: 10 },
+  { from: 1e-4, to: 0.5, perDecade: 8 },
 ] as const
 /** A step that turns the loop gain by more than 45° is halved, this often at most. */
 const LARGEST_TURN = Math.cos(Math.PI / 4)
@@ -114,8 +114,8 @@ function rootBetween(low: number, high: number, f: (omega: number) => number): n
   return Math.exp(findRoot((logOmega) => f(Math.exp(logOmega)), Math.log(low), Math.log(high), CLOSE))
 }
 
-/** The same places about a landmark as the exact reading takes. */
-const AROUND: readonly number[] = [0.97, 0.985, 0.993, 0.997, 1, 1.003, 1.007, 1.015, 1.03]
+/** Shares of a landmark at which the loop is looked at; a sharper bend between them is found by its turn. */
+const AROUND: readonly number[] = [0.97, 0.99, 1, 1.01, 1.03]
 
 /** A power stage has fewer states than would make so many lightly damped pairs. */
 const MOST_LANDMARKS = 16
