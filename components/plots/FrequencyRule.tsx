@@ -29,6 +29,8 @@ const PILL = { top: 2, height: 26 }
 const PLANT_Y = 46
 const AXIS_Y = 64
 const NETWORK_Y = 82
+/** Of the subscript of f_sw; the letters beside it say what it is. */
+const SUBSCRIPT = 13
 const TICK_TEXT_Y = 106
 const HEIGHT = 114
 const BAND = 12
@@ -157,8 +159,8 @@ function Axis({ scale, width }: { readonly scale: RuleScale; readonly width: num
   const theme = useTheme()
   const [low, high] = scale.domain() as [number, number]
   const ticks = decadeTicks(low, high)
-  // The last label gives way to the name of half the switching frequency, which stands in the same row.
-  const room = width - HALF_SWITCHING_LABEL
+  // Half the switching frequency is named in the same row, under its line; a label that it meets gives way.
+  const named = Math.min(scale(high / 2), width - HALF_SWITCHING_LABEL / 2)
   return (
     <G>
       <Line x1={MARGIN} x2={width - MARGIN} y1={AXIS_Y} y2={AXIS_Y} stroke={theme.ink} strokeWidth={1.4} />
@@ -171,7 +173,7 @@ function Axis({ scale, width }: { readonly scale: RuleScale; readonly width: num
         return (
           <G key={tick.value}>
             <Line x1={x} x2={x} y1={AXIS_Y - 6} y2={AXIS_Y + 6} stroke={theme.ink} strokeWidth={1.2} />
-            {x + half > room ? null : (
+            {Math.abs(x - named) < half + HALF_SWITCHING_LABEL / 2 ? null : (
               <PlotText x={Math.max(x, half + 1)} y={TICK_TEXT_Y} color={theme.quiet} anchor="middle">
                 {tick.label}
               </PlotText>
@@ -179,8 +181,11 @@ function Axis({ scale, width }: { readonly scale: RuleScale; readonly width: num
           </G>
         )
       })}
-      <PlotText x={width - 1} y={TICK_TEXT_Y} color={theme.quiet} anchor="end">
-        ½ f<TSpan dy={2}>sw</TSpan>
+      <PlotText x={named} y={TICK_TEXT_Y} color={theme.quiet} anchor="middle">
+        ½ f
+        <TSpan dy={2} fontSize={SUBSCRIPT}>
+          sw
+        </TSpan>
       </PlotText>
     </G>
   )
