@@ -14,7 +14,7 @@ import { spreadStore, useKeptSpread } from '@/hooks/spread/keptSpread'
 export function RunCard({ statistics }: { readonly statistics: StatisticalRun }) {
   const { form } = useKeptSpread()
   const { run, isBusy, problems, start } = statistics
-  const { samples, seed } = problems
+  const { samples, seed, capacitanceLeft, esrTimes } = problems
   return (
     <Card title="Statistical run">
       <Text variant="small" tone="quiet">
@@ -34,6 +34,18 @@ export function RunCard({ statistics }: { readonly statistics: StatisticalRun })
           keyboard="numeric"
           {...(seed ? { error: seed } : { hint: 'the same seed, the same samples' })}
           onChangeText={(text) => spreadStore.enter({ seed: text })}
+        />
+        <Field
+          label="Output capacitance left"
+          value={form.capacitanceLeft}
+          {...(capacitanceLeft ? { error: capacitanceLeft } : { hint: 'by temperature and age, before the tolerance' })}
+          onChangeText={(text) => spreadStore.enter({ capacitanceLeft: text })}
+        />
+        <Field
+          label="ESR times"
+          value={form.esrTimes}
+          {...(esrTimes ? { error: esrTimes } : { hint: 'likewise, for example 3 in the cold' })}
+          onChangeText={(text) => spreadStore.enter({ esrTimes: text })}
         />
       </Fields>
       <Choice
@@ -61,7 +73,7 @@ export function RunCard({ statistics }: { readonly statistics: StatisticalRun })
           <Button
             kind="primary"
             label={run ? 'Run again' : 'Start the run'}
-            isDisabled={samples !== undefined || seed !== undefined}
+            isDisabled={!statistics.canStart}
             onPress={start}
           />
         </View>

@@ -34,6 +34,8 @@ export function useStatisticalRun() {
     isBusy: isUnderWay(run) || starting.isPending,
     isLoading: kept !== null && query.isPending,
     isCancelling: cancelling.isPending,
+    /** False while an entry cannot be read; what the server refused may be tried again. */
+    canStart: read.kind === 'options',
     problems: { ...refusedOptions(starting.error), ...(read.kind === 'problems' ? read.problems : {}) },
     error: starting.error ?? cancelling.error ?? (isGone ? null : query.error),
     start,

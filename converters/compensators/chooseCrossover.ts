@@ -97,7 +97,8 @@ function search(request: ChoiceRequest): Choice {
 function whyNothing(request: ChoiceRequest): string {
   const { plants, window, type, limits } = request
   const { phaseMargin, gainMargin } = plants.design.targets
-  const which = type === null ? 'No network of type I, II or III' : `No network of type ${type}`
+  const all = plants.design.amplifier.kind === 'shunt-optocoupler' ? 'II or III' : 'I, II or III'
+  const which = `No network of type ${type ?? all}`
   const none = `${which} that can be built keeps ${phaseMargin}° and ${gainMargin} dB, or comes near, at every corner of line and load.`
   const bounds = window.bounds.map(({ text }) => text).join(' ')
   if (window.lower >= window.upper) return `${none} The window is empty: ${bounds}`

@@ -13,6 +13,9 @@ const RunForm = z.object({
   seed: z.string().default('1'),
   distribution: z.enum(['normal', 'uniform']).default('normal'),
   model: SpreadModel.default('averaged'),
+  /** What temperature and age leave of the output capacitance, and what they make of its ESR. */
+  capacitanceLeft: z.string().default('100 %'),
+  esrTimes: z.string().default('1'),
 })
 export type RunForm = z.infer<typeof RunForm>
 

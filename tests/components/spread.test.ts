@@ -6,18 +6,28 @@ import { readForm } from '@/components/spread/runForm'
 import { shareDown, shareUp } from '@/components/spread/words'
 
 describe('what is asked of a statistical run', () => {
-  const form = { samples: '10000', seed: '7', distribution: 'uniform', model: 'switched' } as const
+  const form = {
+    samples: '10000',
+    seed: '7',
+    distribution: 'uniform',
+    model: 'switched',
+    capacitanceLeft: '80 %',
+    esrTimes: '3',
+  } as const
 
   it('becomes options', () => {
     expect(readForm(form)).toMatchObject({
       kind: 'options',
       options: { samples: 10_000, seed: 7, distribution: 'uniform', model: 'switched' },
     })
+    expect(readForm(form)).toMatchObject({
+      options: { conditions: { ageing: { capacitanceFactor: 0.8, esrFactor: 3 } } },
+    })
   })
   it('names each entry that cannot be used', () => {
-    const read = readForm({ ...form, samples: '12', seed: 'seven' })
+    const read = readForm({ ...form, samples: '12', seed: 'seven', esrTimes: '-1' })
     expect(read).toMatchObject({ kind: 'problems', problems: { samples: 'Must be at least 100.' } })
-    expect(read.kind === 'problems' && Object.keys(read.problems).sort()).toEqual(['samples', 'seed'])
+    expect(read.kind === 'problems' && Object.keys(read.problems).sort()).toEqual(['esrTimes', 'samples', 'seed'])
   })
 })
 
