@@ -44,6 +44,8 @@ async function shootAll(browser: Browser, { origin }: Product): Promise<void> {
       await openScreen(page, 'Loop')
       await closeLoop(page)
       await shoot(page, name('loop'))
+      await openScreen(page, 'Spread')
+      await shoot(page, name('spread'))
       await context.close()
     }
   }

@@ -28,7 +28,7 @@ export async function openDesign(page: Page, origin: string, design: DesignDocum
 }
 
 /** Goes to one of the screens of the open design. */
-export async function openScreen(page: Page, name: 'Stage' | 'Plant' | 'Loop'): Promise<void> {
+export async function openScreen(page: Page, name: 'Stage' | 'Plant' | 'Loop' | 'Spread'): Promise<void> {
   await page.getByRole('navigation', { name: 'Screens of the design' }).getByRole('link', { name }).click()
-  await page.waitForURL(`**/design/${name.toLowerCase()}`)
+  await page.waitForURL(new RegExp(`/design/${name.toLowerCase()}(\\?|$)`))
 }
