@@ -44,12 +44,36 @@ export function balancingScale(A: readonly (readonly number[])[]): number[] {
 export function eigenvalues(A: readonly (readonly number[])[]): Complex[] {
   const n = A.length
   if (n === 0) return []
+  if (n === 2) return eigenvaluesOfTwo(A)
   const scale = balancingScale(A)
   const balanced = new Matrix(A.map((row, i) => row.map((a, j) => (a * scale[j]!) / scale[i]!)))
   if (!balanced.to1DArray().every(Number.isFinite))
     throw new RangeError('a matrix with an infinite entry has no eigenvalues')
   const { realEigenvalues, imaginaryEigenvalues } = new EigenvalueDecomposition(balanced)
   return realEigenvalues.map((re, i) => ({ re, im: imaginaryEigenvalues[i]! }))
+}
+
+/** The roots of λ² − trace·λ + determinant; a buck or boost has no more, and statistical runs ask for thousands. */
+function eigenvaluesOfTwo(A: readonly (readonly number[])[]): Complex[] {
+  const [a, b] = A[0] as [number, number]
+  const [c, d] = A[1] as [number, number]
+  const half = (a - d) / 2
+  const middle = (a + d) / 2
+  const square = half * half + b * c
+  if (!Number.isFinite(square)) throw new RangeError('a matrix with an infinite entry has no eigenvalues')
+  const root = Math.sqrt(Math.abs(square))
+  if (square < 0) {
+    return [
+      { re: middle, im: root },
+      { re: middle, im: -root },
+    ]
+  }
+  // The larger one adds up; the smaller one would cancel, so it follows from the product.
+  const larger = middle < 0 ? middle - root : middle + root
+  return [
+    { re: larger, im: 0 },
+    { re: larger === 0 ? 0 : (a * d - b * c) / larger, im: 0 },
+  ]
 }
 
 /**

@@ -2,10 +2,9 @@
  * The figures of `readMargins` for thousands of loops: a coarse grid that is refined only where the loop gain turns,
  * then a bracketed search for each crossing. No logarithm or angle is taken but at the crossings themselves.
  */
-import type { LoopGain } from '../loop/margins'
-import { argumentDeg, type Complex } from '../numeric/complex'
 import { findRoot } from '../numeric/rootFinding'
 import type { MarginSummary } from '../results'
+import type { ResponseInto } from './plantResponse'
 
 export interface LoopShape {
   /** Hz, near which the curve bends sharply. */
@@ -27,6 +26,8 @@ const CLOSE = 1e-7
 
 /** Samples of one loop, in buffers that are used again for the next. */
 interface Walk {
+  /** Real and imaginary part of the last reading. */
+  readonly out: Float64Array
   length: number
   omega: Float64Array
   re: Float64Array
@@ -34,16 +35,17 @@ interface Walk {
 }
 
 /** @param switchingFrequency - Hz, of all loops that will be read. */
-export function marginReader(switchingFrequency: number): (loopGain: LoopGain, shape: LoopShape) => MarginSummary {
+export function marginReader(switchingFrequency: number): (loopGain: ResponseInto, shape: LoopShape) => MarginSummary {
   const grid = gridUpTo(switchingFrequency)
-  const walk: Walk = { length: 0, ...buffers(16 * grid.length) }
+  const walk: Walk = { out: new Float64Array(2), length: 0, ...buffers(16 * grid.length) }
   const merged = new Float64Array(grid.length + MOST_LANDMARKS * AROUND.length)
   return function read(loopGain, { landmarks, unstablePoles }) {
     walkLoop(loopGain, withLandmarks(grid, landmarks, merged), walk)
     const { phaseMargins, crossover } = gainCrossings(loopGain, walk)
     const { gainMargin, encirclements } = phaseCrossings(loopGain, walk)
     // A loop gain that is negative at standstill passes the axis there too, once for both halves.
-    const passage = loopGain(0).re < -1 ? (walk.im[0]! < 0 ? -1 : 1) : 0
+    loopGain(0, walk.out)
+    const passage = walk.out[0]! < -1 ? (walk.im[0]! < 0 ? -1 : 1) : 0
     // Gain left at half the switching frequency meets its own sampled image there.
     const isStable = square(walk, walk.length - 1) < 1 && unstablePoles + 2 * encirclements + passage === 0
     return {
@@ -67,7 +69,7 @@ function gridUpTo(switchingFrequency: number): Float64Array {
   return Float64Array.from([...points, scale / 2])
 }
 
-const buffers = (capacity: number): Omit<Walk, 'length'> => ({
+const buffers = (capacity: number): Pick<Walk, 'omega' | 're' | 'im'> => ({
   omega: new Float64Array(capacity),
   re: new Float64Array(capacity),
   im: new Float64Array(capacity),
@@ -75,7 +77,8 @@ const buffers = (capacity: number): Omit<Walk, 'length'> => ({
 
 const square = ({ re, im }: Walk, i: number): number => re[i]! * re[i]! + im[i]! * im[i]!
 
-function gainCrossings(loopGain: LoopGain, walk: Walk): { phaseMargins: number[]; crossover: number | null } {
+function gainCrossings(loopGain: ResponseInto, walk: Walk): { phaseMargins: number[]; crossover: number | null } {
+  const { out } = walk
   const phaseMargins: number[] = []
   let crossover: number | null = null
   let above = square(walk, 0) > 1
@@ -83,23 +86,32 @@ function gainCrossings(loopGain: LoopGain, walk: Walk): { phaseMargins: number[]
     const wasAbove = above
     above = square(walk, i) > 1
     if (above === wasAbove) continue
-    const at = rootBetween(walk.omega[i - 1]!, walk.omega[i]!, (w) => logSquare(loopGain(w)))
+    const at = rootBetween(walk.omega[i - 1]!, walk.omega[i]!, (omega) => {
+      loopGain(omega, out)
+      return Math.log(out[0]! * out[0]! + out[1]! * out[1]!)
+    })
     crossover = at / (2 * Math.PI)
-    phaseMargins.push(wrap(180 + argumentDeg(loopGain(at))))
+    loopGain(at, out)
+    phaseMargins.push(wrap(180 + (180 / Math.PI) * Math.atan2(out[1]!, out[0]!)))
   }
   return { phaseMargins, crossover }
 }
 
 function phaseCrossings(
-  loopGain: LoopGain,
-  { length, omega, re, im }: Walk,
+  loopGain: ResponseInto,
+  { out, length, omega, re, im }: Walk,
 ): { gainMargin: number | null; encirclements: number } {
   let gainMargin: number | null = null
   let encirclements = 0
   for (let i = 1; i < length; i++) {
     const downwards = im[i]! < 0
     if (im[i - 1]! < 0 === downwards || !(re[i - 1]! < 0 || re[i]! < 0)) continue
-    const { re: real } = loopGain(rootBetween(omega[i - 1]!, omega[i]!, (w) => loopGain(w).im))
+    const at = rootBetween(omega[i - 1]!, omega[i]!, (w) => {
+      loopGain(w, out)
+      return out[1]!
+    })
+    loopGain(at, out)
+    const real = out[0]!
     // Each passage left of −1 is half an encirclement there, and half at the negative frequencies.
     if (real < -1) encirclements += downwards ? -1 : 1
     else if (real < 0) gainMargin = Math.min(gainMargin ?? Infinity, -20 * Math.log10(-real))
@@ -108,7 +120,6 @@ function phaseCrossings(
 }
 
 const wrap = (degrees: number): number => degrees - 360 * Math.ceil((degrees - 180) / 360)
-const logSquare = ({ re, im }: Complex): number => Math.log(re * re + im * im)
 
 function rootBetween(low: number, high: number, f: (omega: number) => number): number {
   return Math.exp(findRoot((logOmega) => f(Math.exp(logOmega)), Math.log(low), Math.log(high), CLOSE))
@@ -140,39 +151,35 @@ function withLandmarks(grid: Float64Array, landmarks: readonly number[], merged:
   return merged.subarray(0, grid.length + extra.length)
 }
 
-function walkLoop(loopGain: LoopGain, grid: Float64Array, walk: Walk): void {
+function walkLoop(loopGain: ResponseInto, grid: Float64Array, walk: Walk): void {
+  const { out } = walk
   walk.length = 0
-  let before = loopGain(grid[0]!)
-  keep(walk, grid[0]!, before)
+  loopGain(grid[0]!, out)
+  keep(walk, grid[0]!, out[0]!, out[1]!)
   for (let i = 1; i < grid.length; i++) {
-    const here = loopGain(grid[i]!)
-    stepTo(loopGain, walk, grid[i - 1]!, before, grid[i]!, here, MOST_HALVINGS)
-    before = here
+    loopGain(grid[i]!, out)
+    stepTo(loopGain, walk, grid[i]!, out[0]!, out[1]!, MOST_HALVINGS)
   }
 }
 
-function stepTo(
-  loopGain: LoopGain,
-  walk: Walk,
-  from: number,
-  a: Complex,
-  to: number,
-  b: Complex,
-  halvings: number,
-): void {
-  const turn = a.re * b.re + a.im * b.im
-  const sizes = Math.sqrt((a.re * a.re + a.im * a.im) * (b.re * b.re + b.im * b.im))
+/** Goes on from the last sample that was kept to T = re + j·im at ω. */
+function stepTo(loopGain: ResponseInto, walk: Walk, omega: number, re: number, im: number, halvings: number): void {
+  const last = walk.length - 1
+  const fromRe = walk.re[last]!
+  const fromIm = walk.im[last]!
+  const turn = fromRe * re + fromIm * im
+  const sizes = Math.sqrt((fromRe * fromRe + fromIm * fromIm) * (re * re + im * im))
   if (halvings === 0 || turn >= LARGEST_TURN * sizes) {
-    keep(walk, to, b)
+    keep(walk, omega, re, im)
     return
   }
-  const middle = Math.sqrt(from * to)
-  const gain = loopGain(middle)
-  stepTo(loopGain, walk, from, a, middle, gain, halvings - 1)
-  stepTo(loopGain, walk, middle, gain, to, b, halvings - 1)
+  const middle = Math.sqrt(walk.omega[last]! * omega)
+  loopGain(middle, walk.out)
+  stepTo(loopGain, walk, middle, walk.out[0]!, walk.out[1]!, halvings - 1)
+  stepTo(loopGain, walk, omega, re, im, halvings - 1)
 }
 
-function keep(walk: Walk, omega: number, { re, im }: Complex): void {
+function keep(walk: Walk, omega: number, re: number, im: number): void {
   if (walk.length === walk.omega.length) grow(walk)
   walk.omega[walk.length] = omega
   walk.re[walk.length] = re
@@ -189,7 +196,7 @@ function grow(walk: Walk): void {
 }
 
 /** Least |1 + T|: golden sections about every dip of the samples that could be the lowest. */
-function closestApproach(loopGain: LoopGain, { length, omega, re, im }: Walk): number {
+function closestApproach(loopGain: ResponseInto, { out, length, omega, re, im }: Walk): number {
   const squareAt = (i: number) => (1 + re[i]!) * (1 + re[i]!) + im[i]! * im[i]!
   let least = Infinity
   for (let i = 0; i < length; i++) least = Math.min(least, squareAt(i))
@@ -200,7 +207,7 @@ function closestApproach(loopGain: LoopGain, { length, omega, re, im }: Walk): n
     const low = Math.max(0, i - 1)
     const high = Math.min(length - 1, i + 1)
     if (here > squareAt(low) || here > squareAt(high)) continue
-    best = Math.min(best, leastSquareBetween(loopGain, Math.log(omega[low]!), Math.log(omega[high]!)))
+    best = Math.min(best, leastSquareBetween(loopGain, out, Math.log(omega[low]!), Math.log(omega[high]!)))
   }
   return Math.sqrt(best)
 }
@@ -210,10 +217,10 @@ const CANDIDATE = 1.7
 const GOLDEN = (Math.sqrt(5) - 1) / 2
 const SECTIONS = 10
 
-function leastSquareBetween(loopGain: LoopGain, from: number, to: number): number {
+function leastSquareBetween(loopGain: ResponseInto, out: Float64Array, from: number, to: number): number {
   const distance = (logOmega: number) => {
-    const { re, im } = loopGain(Math.exp(logOmega))
-    return (1 + re) * (1 + re) + im * im
+    loopGain(Math.exp(logOmega), out)
+    return (1 + out[0]!) * (1 + out[0]!) + out[1]! * out[1]!
   }
   let low = from
   let high = to

@@ -8,12 +8,14 @@
  */
 import { CONTROL, type LinearModel } from '../averaged/linearModel'
 import { balancingScale } from '../numeric/eigen'
-import type { Complex } from '../numeric/complex'
 
 /** A coupling below this share of the matrix is round-off: the states behind it do not answer to the control. */
 const NEGLIGIBLE = 1e-15
 
-export function controlToOutput({ A, B, C, D }: LinearModel): (omega: number) => Complex {
+/** Writes real and imaginary part at ω (rad/s) into `out`: a run asks so often that objects would cost more than sums. */
+export type ResponseInto = (omega: number, out: Float64Array) => void
+
+export function controlToOutput({ A, B, C, D }: LinearModel): ResponseInto {
   const n = A.length
   const scale = balancingScale(A)
   const H = A.map((row, i) => row.map((value, j) => (value * scale[j]!) / scale[i]!))
@@ -25,7 +27,7 @@ export function controlToOutput({ A, B, C, D }: LinearModel): (omega: number) =>
   const through = D[CONTROL]!
   const re = new Float64Array(n)
   const im = new Float64Array(n)
-  return function respond(omega) {
+  return function respond(omega, out) {
     re[size - 1] = 1
     im[size - 1] = 0
     let residualRe = 0
@@ -54,10 +56,8 @@ export function controlToOutput({ A, B, C, D }: LinearModel): (omega: number) =>
       outIm += c[i]! * im[i]!
     }
     const factor = beta / (residualRe * residualRe + residualIm * residualIm)
-    return {
-      re: through + factor * (outRe * residualRe + outIm * residualIm),
-      im: factor * (outIm * residualRe - outRe * residualIm),
-    }
+    out[0] = through + factor * (outRe * residualRe + outIm * residualIm)
+    out[1] = factor * (outIm * residualRe - outRe * residualIm)
   }
 }
 

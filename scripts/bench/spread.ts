@@ -54,10 +54,10 @@ async function besideNumPy(rounds: number): Promise<{ closedForm: number; statis
   const closedForms: number[] = []
   const statisticals: number[] = []
   const work = () => runSpread(benchDesign, { samples: 10_000 })
+  for (let round = 0; round < rounds; round++) work() // to warm up
   for (let round = 0; round < rounds; round++) {
     const { stdout } = await run('/usr/bin/python3', [here('secondOrder.py')])
     closedForms.push(Number(stdout))
-    if (round === 0) work()
     statisticals.push(processorTimeOf(work))
   }
   return { closedForm: median(closedForms), statistical: median(statisticals) }
