@@ -51,36 +51,38 @@ export function buildNetwork(setting: AmplifierSetting, compensator: Compensator
     }
   }
   const upper = parts.R1 || setting.sense.upperResistance
-  const shared = {
-    type,
-    upperConductance: 1 / upper,
-    lowerConductance: 1 / (upper * lowerRatio(setting)),
-    R2: type === 'I' ? 0 : (parts.R2 ?? 0),
-    C1: parts.C1!,
-    C2: type === 'I' ? 0 : (parts.C2 ?? 0),
-    R3: type === 'III' ? parts.R3! : 0,
-    C3: type === 'III' ? parts.C3! : 0,
-  }
+  const upperConductance = 1 / upper
+  const lowerConductance = 1 / (upper * lowerRatio(setting))
+  const R2 = type === 'I' ? 0 : (parts.R2 ?? 0)
+  const C1 = parts.C1!
+  const C2 = type === 'I' ? 0 : (parts.C2 ?? 0)
+  const R3 = type === 'III' ? parts.R3! : 0
+  const C3 = type === 'III' ? parts.C3! : 0
+  // Written out: statistical runs build one for every sample, and copying properties would be the dearest part of it.
   switch (amplifier.kind) {
     case 'op-amp': {
       const { openLoopGain, gainBandwidth } = amplifier
-      return { ...shared, kind: 'op-amp', openLoopGain, amplifierPole: (2 * Math.PI * gainBandwidth) / openLoopGain }
+      const amplifierPole = (2 * Math.PI * gainBandwidth) / openLoopGain
+      const kind = 'op-amp'
+      return { type, upperConductance, lowerConductance, R2, C1, C2, R3, C3, kind, openLoopGain, amplifierPole }
     }
     case 'transconductance': {
       const { transconductance, outputResistance } = amplifier
-      return { ...shared, kind: 'transconductance', transconductance, outputConductance: 1 / outputResistance }
+      const outputConductance = 1 / outputResistance
+      const kind = 'transconductance'
+      return { type, upperConductance, lowerConductance, R2, C1, C2, R3, C3, kind, transconductance, outputConductance }
     }
     case 'shunt-optocoupler': {
       const { currentTransferRatio, pullUpResistance, ledResistance, optocouplerPole } = amplifier
       return {
         type,
         kind: 'shunt-optocoupler',
-        upperConductance: shared.upperConductance,
-        R2: parts.R2 ?? 0,
-        C1: shared.C1,
-        C2: shared.C2,
-        R3: shared.R3,
-        C3: shared.C3,
+        upperConductance,
+        R2,
+        C1,
+        C2,
+        R3,
+        C3,
         currentTransferRatio,
         pullUpResistance,
         ledResistance,

@@ -29,23 +29,16 @@ export function dutyNear(circuit: Circuit, guess: number): number | null {
   const matrix = new Float64Array(n * n)
   const rest = new Float64Array(n)
   const moved = new Float64Array(n)
-  const fill = (duty: number) => {
-    for (let i = 0; i < n; i++) {
-      const first = on.A[i]!
-      const second = off.A[i]!
-      for (let j = 0; j < n; j++) matrix[i * n + j] = duty * first[j]! + (1 - duty) * second[j]!
-    }
-  }
   let duty = guess
   for (let step = 0; step < MOST_STEPS; step++) {
-    fill(duty)
+    blendInto(matrix, on.A, off.A, duty)
     for (let i = 0; i < n; i++) rest[i] = -duty * driveOn[i]! - (1 - duty) * driveOff[i]!
     if (!solveReal(matrix, n, rest, 1)) return null
     const withOn = dot(outputOn, rest) + throughOn
     const withOff = dot(outputOff, rest) + throughOff
     const error = duty * withOn + (1 - duty) * withOff - wanted
     if (Math.abs(error) <= MET * wanted) return duty
-    fill(duty)
+    blendInto(matrix, on.A, off.A, duty)
     for (let i = 0; i < n; i++) moved[i] = dot(off.A[i]!, rest) + driveOff[i]! - dot(on.A[i]!, rest) - driveOn[i]!
     if (!solveReal(matrix, n, moved, 1)) return null
     const slope = withOn - withOff + duty * dot(outputOn, moved) + (1 - duty) * dot(outputOff, moved)
@@ -54,6 +47,21 @@ export function dutyNear(circuit: Circuit, guess: number): number | null {
     if (!(duty > 0 && duty <= design.dutyLimit)) return null
   }
   return null
+}
+
+/** D·A₁ + (1 − D)·A₂, row-major. */
+function blendInto(
+  matrix: Float64Array,
+  on: readonly (readonly number[])[],
+  off: readonly (readonly number[])[],
+  duty: number,
+): void {
+  const n = on.length
+  for (let i = 0; i < n; i++) {
+    const first = on[i]!
+    const second = off[i]!
+    for (let j = 0; j < n; j++) matrix[i * n + j] = duty * first[j]! + (1 - duty) * second[j]!
+  }
 }
 
 function drive({ B }: Interval, inputs: readonly number[]): Float64Array {

@@ -196,20 +196,29 @@ function grow(walk: Walk): void {
 }
 
 /** Least |1 + T|: golden sections about every dip of the samples that could be the lowest. */
-function closestApproach(loopGain: ResponseInto, { out, length, omega, re, im }: Walk): number {
-  const squareAt = (i: number) => (1 + re[i]!) * (1 + re[i]!) + im[i]! * im[i]!
+function closestApproach(loopGain: ResponseInto, walk: Walk): number {
+  const { length, omega } = walk
   let least = Infinity
-  for (let i = 0; i < length; i++) least = Math.min(least, squareAt(i))
+  for (let i = 0; i < length; i++) least = Math.min(least, distanceSquare(walk.re[i]!, walk.im[i]!))
   let best = least
   for (let i = 0; i < length; i++) {
-    const here = squareAt(i)
+    const here = distanceSquare(walk.re[i]!, walk.im[i]!)
     if (here > CANDIDATE * least) continue
     const low = Math.max(0, i - 1)
     const high = Math.min(length - 1, i + 1)
-    if (here > squareAt(low) || here > squareAt(high)) continue
-    best = Math.min(best, leastSquareBetween(loopGain, out, Math.log(omega[low]!), Math.log(omega[high]!)))
+    if (here > distanceSquare(walk.re[low]!, walk.im[low]!) || here > distanceSquare(walk.re[high]!, walk.im[high]!))
+      continue
+    best = Math.min(best, leastBetween(loopGain, walk.out, Math.log(omega[low]!), Math.log(omega[high]!)))
   }
   return Math.sqrt(best)
+}
+
+/** |1 + T|² */
+const distanceSquare = (re: number, im: number): number => (1 + re) * (1 + re) + im * im
+
+function distanceSquareAt(loopGain: ResponseInto, out: Float64Array, logOmega: number): number {
+  loopGain(Math.exp(logOmega), out)
+  return distanceSquare(out[0]!, out[1]!)
 }
 
 /** |1 + T|² of a sampled dip, over the least one, up to which the true least may lie in it. */
@@ -217,30 +226,26 @@ const CANDIDATE = 1.7
 const GOLDEN = (Math.sqrt(5) - 1) / 2
 const SECTIONS = 10
 
-function leastSquareBetween(loopGain: ResponseInto, out: Float64Array, from: number, to: number): number {
-  const distance = (logOmega: number) => {
-    loopGain(Math.exp(logOmega), out)
-    return (1 + out[0]!) * (1 + out[0]!) + out[1]! * out[1]!
-  }
+function leastBetween(loopGain: ResponseInto, out: Float64Array, from: number, to: number): number {
   let low = from
   let high = to
   let left = high - GOLDEN * (high - low)
   let right = low + GOLDEN * (high - low)
-  let atLeft = distance(left)
-  let atRight = distance(right)
+  let atLeft = distanceSquareAt(loopGain, out, left)
+  let atRight = distanceSquareAt(loopGain, out, right)
   for (let k = 0; k < SECTIONS; k++) {
     if (atLeft < atRight) {
       high = right
       right = left
       atRight = atLeft
       left = high - GOLDEN * (high - low)
-      atLeft = distance(left)
+      atLeft = distanceSquareAt(loopGain, out, left)
     } else {
       low = left
       left = right
       atLeft = atRight
       right = low + GOLDEN * (high - low)
-      atRight = distance(right)
+      atRight = distanceSquareAt(loopGain, out, right)
     }
   }
   return Math.min(atLeft, atRight)

@@ -27,7 +27,7 @@ export function controlToOutput({ A, B, C, D }: LinearModel): ResponseInto {
   const through = D[CONTROL]!
   const re = new Float64Array(n)
   const im = new Float64Array(n)
-  return function respond(omega, out) {
+  return (omega, out) => {
     re[size - 1] = 1
     im[size - 1] = 0
     let residualRe = 0

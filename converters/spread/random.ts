@@ -9,18 +9,11 @@
  */
 export function randomBits(...seed: readonly number[]): () => number {
   let mixed = 0
-  const mix = () => {
-    mixed = (mixed + 0x9e3779b9) | 0
-    let z = mixed
-    z = Math.imul(z ^ (z >>> 16), 0x85ebca6b)
-    z = Math.imul(z ^ (z >>> 13), 0xc2b2ae35)
-    return z ^ (z >>> 16)
-  }
-  for (const part of seed) mixed = mix() ^ part
-  let a = mix()
-  let b = mix()
-  let c = mix()
-  let d = mix()
+  for (const part of seed) mixed = avalanche(mixed + GOLDEN_RATIO) ^ part
+  let a = avalanche(mixed + GOLDEN_RATIO)
+  let b = avalanche(mixed + 2 * GOLDEN_RATIO)
+  let c = avalanche(mixed + 3 * GOLDEN_RATIO)
+  let d = avalanche(mixed + 4 * GOLDEN_RATIO)
   return () => {
     const product = Math.imul(b, 5)
     const answer = Math.imul((product << 7) | (product >>> 25), 9)
@@ -33,6 +26,17 @@ export function randomBits(...seed: readonly number[]): () => number {
     d = (d << 11) | (d >>> 21)
     return answer >>> 0
   }
+}
+
+/** 2³² over the golden ratio, the step of the counter. */
+const GOLDEN_RATIO = 0x9e3779b9
+
+/** Every bit of the input moves about half of the bits of the output. */
+function avalanche(bits: number): number {
+  let z = bits | 0
+  z = Math.imul(z ^ (z >>> 16), 0x85ebca6b)
+  z = Math.imul(z ^ (z >>> 13), 0xc2b2ae35)
+  return z ^ (z >>> 16)
 }
 
 /** From 32 bits to the middle of one of 2³² cells of (0, 1): never an end, so that every quantile of it is finite. */
