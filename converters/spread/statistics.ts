@@ -12,7 +12,8 @@ import { latinHypercube } from './random'
 import type { SpreadResult } from './results'
 import { saltelliRows } from './sobol'
 import { accumulate, type SpreadSummary } from './summary'
-import { conditioned, quantileOf, sampleAt, samplerOf, variablesOf, type Sample, type Variable } from './variation'
+import { variablesOf, type Variable } from './variables'
+import { conditioned, quantileOf, sampleAt, samplerOf, type Sample } from './variation'
 
 /** Whole curves and closed-loop poles are kept of so many samples at most, evenly among them. */
 const MOST_KEPT: Readonly<Record<SpreadModel, number>> = { averaged: 250, switched: 200 }

@@ -6,7 +6,8 @@ import { mergeFailures, withFailure } from './failures'
 import { appliedTargets, slackOf } from './judging'
 import type { ToleranceCornerOptions } from './options'
 import type { AppliedTargets, SpreadFailure, ToleranceCorner, ToleranceCornerSet } from './results'
-import { conditioned, sampleAt, samplerOf, variablesOf, type Variable } from './variation'
+import { variablesOf, type Variable } from './variables'
+import { conditioned, sampleAt, samplerOf } from './variation'
 
 interface RankedVariable {
   readonly variable: Variable
