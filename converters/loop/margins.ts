@@ -122,14 +122,29 @@ const rootInLog = (low: Sample, high: Sample, f: (omega: number) => number): num
 
 const distanceToCritical = (gain: Complex): number => Math.hypot(1 + gain.re, gain.im)
 
-/** Least |1 + T|, refined around the least sample by golden sections. */
+/** Least |1 + T|, refined around every dip of the samples that could be the lowest. */
 function closestApproach(loopGain: LoopGain, samples: readonly Sample[]): { distance: number; frequency: number } {
-  let least = 0
-  samples.forEach((sample, i) => {
-    if (distanceToCritical(sample.gain) < distanceToCritical(samples[least]!.gain)) least = i
+  const distances = samples.map(({ gain }) => distanceToCritical(gain))
+  const least = Math.min(...distances)
+  const dips = samples.flatMap((_, i) => {
+    const [before, here, after] = [distances[i - 1] ?? Infinity, distances[i]!, distances[i + 1] ?? Infinity]
+    if (here > CANDIDATE * least || here > before || here > after) return []
+    return [refineDip(loopGain, samples, i)]
   })
-  let low = samples[Math.max(0, least - 1)]!.logOmega
-  let high = samples[Math.min(samples.length - 1, least + 1)]!.logOmega
+  return dips.reduce((best, dip) => (dip.distance < best.distance ? dip : best))
+}
+
+/** How far above the lowest sample the sample of the true lowest dip may lie. */
+const CANDIDATE = 1.3
+
+/** Golden sections between the neighbours of a sample. */
+function refineDip(
+  loopGain: LoopGain,
+  samples: readonly Sample[],
+  at: number,
+): { distance: number; frequency: number } {
+  let low = samples[Math.max(0, at - 1)]!.logOmega
+  let high = samples[Math.min(samples.length - 1, at + 1)]!.logOmega
   const golden = (Math.sqrt(5) - 1) / 2
   const distance = (logOmega: number) => distanceToCritical(loopGain(Math.exp(logOmega)))
   let left = high - golden * (high - low)
@@ -153,10 +168,11 @@ function closestApproach(loopGain: LoopGain, samples: readonly Sample[]): { dist
   }
   const best = (low + high) / 2
   const refined = distance(best)
-  const sampled = distanceToCritical(samples[least]!.gain)
+  const { gain, omega } = samples[at]!
+  const sampled = distanceToCritical(gain)
   return refined <= sampled
     ? { distance: refined, frequency: Math.exp(best) / (2 * Math.PI) }
-    : { distance: sampled, frequency: samples[least]!.omega / (2 * Math.PI) }
+    : { distance: sampled, frequency: omega / (2 * Math.PI) }
 }
 
 /** Smallest extra delay that uses up the phase above −180° at a crossing. */
